@@ -9,7 +9,7 @@ export interface DimensionDefinition {
   readonly noun: string;
   /** Unit as shown -> factor to SI. The first one listed is the unit offered first. */
   readonly units: Readonly<Record<string, number>>;
-  /** Other spellings of a unit (lower case) -> unit as shown. */
+  /** Other spellings of a unit -> unit as shown; Greek letters in their NFKC form. */
   readonly spellings?: Readonly<Record<string, string>>;
   /** SI prefixes differ only by case (m and M): compare units with their case. */
   readonly caseSensitive?: boolean;
@@ -21,7 +21,6 @@ export const dimensions = {
     noun: 'a length',
     units: { mm: 1e-3, um: 1e-6, mil: 25.4e-6, in: 25.4e-3, cm: 1e-2, m: 1, nm: 1e-9 },
     spellings: {
-      µm: 'um',
       μm: 'um',
       micron: 'um',
       mils: 'mil',
@@ -46,28 +45,28 @@ export const dimensions = {
     si: 'ohm',
     noun: 'a resistance',
     units: { ohm: 1, mohm: 1e-3, kohm: 1e3, Mohm: 1e6 },
-    spellings: { Ω: 'ohm', Ω: 'ohm', ohms: 'ohm', mΩ: 'mohm', kΩ: 'kohm', MΩ: 'Mohm' },
+    spellings: { Ω: 'ohm', ohms: 'ohm', mΩ: 'mohm', kΩ: 'kohm', MΩ: 'Mohm' },
     caseSensitive: true,
   },
   inductance: {
     si: 'H',
     noun: 'an inductance',
     units: { nH: 1e-9, pH: 1e-12, uH: 1e-6, mH: 1e-3, H: 1, fH: 1e-15 },
-    spellings: { µH: 'uH', μH: 'uH' },
+    spellings: { μH: 'uH' },
     caseSensitive: true,
   },
   capacitance: {
     si: 'F',
     noun: 'a capacitance',
     units: { pF: 1e-12, nF: 1e-9, fF: 1e-15, uF: 1e-6, mF: 1e-3, F: 1 },
-    spellings: { µF: 'uF', μF: 'uF' },
+    spellings: { μF: 'uF' },
     caseSensitive: true,
   },
   time: {
     si: 's',
     noun: 'a time',
     units: { ps: 1e-12, ns: 1e-9, fs: 1e-15, us: 1e-6, ms: 1e-3, s: 1 },
-    spellings: { µs: 'us', μs: 'us' },
+    spellings: { μs: 'us' },
   },
   loss: { si: 'dB', noun: 'a loss', units: { dB: 1 } },
   lossPerLength: {
@@ -87,14 +86,14 @@ export const dimensions = {
     si: 'H/m',
     noun: 'an inductance per length',
     units: { 'nH/m': 1e-9, 'uH/m': 1e-6, 'nH/mm': 1e-6, 'nH/cm': 1e-7, 'nH/in': 1e-9 / 25.4e-3, 'H/m': 1 },
-    spellings: { 'µH/m': 'uH/m' },
+    spellings: { 'μH/m': 'uH/m' },
     caseSensitive: true,
   },
   conductancePerLength: {
     si: 'S/m',
     noun: 'a conductance per length',
     units: { 'S/m': 1, 'mS/m': 1e-3, 'uS/m': 1e-6 },
-    spellings: { 'µS/m': 'uS/m' },
+    spellings: { 'μS/m': 'uS/m' },
     caseSensitive: true,
   },
   capacitancePerLength: {

@@ -16,7 +16,11 @@ const quantityPattern = /^([+-]?(?:\d+\.?\d*|\.\d+)(?:[eE][+-]?\d+)?)\s*(.*)$/u;
  */
 export function parseQuantity(text: string, dimension: Dimension, assumedUnit?: string): ParsedQuantity {
   const definition = definitionOf(dimension);
-  const trimmed = text.trim().replace(/\u2212/g, '-');
+  // NFKC folds the micro sign and the ohm sign into the Greek letters they look like.
+  const trimmed = text
+    .normalize('NFKC')
+    .trim()
+    .replace(/\u2212/g, '-');
   if (trimmed === '') return refused(`Give ${definition.noun}, such as "${example(definition)}".`);
   if (/^[+-]?\d+,\d/.test(trimmed)) return refused('Write the decimal mark as a point, not a comma.');
   const match = quantityPattern.exec(trimmed);
@@ -34,16 +38,22 @@ export function parseQuantity(text: string, dimension: Dimension, assumedUnit?: 
 
 function scaled(digits: string, unit: string, definition: DimensionDefinition): ParsedQuantity {
   const factor = definition.units[unit] ?? 1;
-  // Decimal prefixes go through the decimal exponent, so that "0.1 mm" is the same number as 1e-4.
-  const exponent = Math.round(Math.log10(factor));
-  const isPowerOfTen = Number(`1e${exponent}`) === factor;
-  const value = isPowerOfTen ? shifted(digits, exponent) : Number(digits) * factor;
+  // A decimal factor is an integer and a power of ten: "12 mil" is 12 x 254 x 1e-7, exactly 304.8 um.
+  const [mantissa, exponent] = factor.toExponential().split('e') as [string, string];
+  const integer = Number(mantissa.replace('.', ''));
+  const shift = Number(exponent) - (mantissa.length > 1 ? mantissa.length - 2 : 0);
+  const exact = shifted(digits, integer, shift);
+  const value = Number.isNaN(exact) ? Number(digits) * factor : exact;
   return Number.isFinite(value) ? { ok: true, value, unit } : refused('The number is too large.');
 }
 
-function shifted(digits: string, exponent: number): number {
-  const [mantissa, written] = digits.toLowerCase().split('e');
-  return Number(`${mantissa}e${Number(written ?? 0) + exponent}`);
+/** Digits x integer x 10^shift, rounded once; NaN where the digits are too many to be held as an integer. */
+function shifted(digits: string, integer: number, shift: number): number {
+  const [mantissa, written] = digits.toLowerCase().split('e') as [string, string | undefined];
+  const places = (mantissa.split('.')[1] ?? '').length;
+  const whole = Number(mantissa.replace('.', '')) * integer;
+  if (!Number.isSafeInteger(whole)) return Number.NaN;
+  return Number(`${whole}e${Number(written ?? 0) + shift - places}`);
 }
 
 function unitNamed(written: string, definition: DimensionDefinition): string | undefined {

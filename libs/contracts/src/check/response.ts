@@ -1,0 +1,73 @@
+import * as z from 'zod';
+import { limitVerdicts } from './verdicts';
+
+export const responseFormat = 'tollgate.response/1';
+
+const complexNumber = z.tuple([z.number(), z.number()]);
+const matrix = z.array(z.array(complexNumber));
+/** Infinite loss has no number in JSON: it is null. */
+const decibels = z.number().nullable();
+const margin = z.object({ frequencyHz: z.number(), marginDb: decibels });
+
+export const limitResult = z.object({
+  id: z.string(),
+  verdict: z.enum(limitVerdicts),
+  holds: z.boolean(),
+  /** Why a limit was not judged; empty where it was. */
+  reason: z.string(),
+  /** Of the grid's points inside the limit's range. */
+  worst: margin.nullable(),
+  /** Of the engine between the grid's points too; what screens and reports show. */
+  worstRefined: margin.nullable(),
+  exceedsHz: z.array(z.tuple([z.number(), z.number()])),
+});
+export type LimitResult = z.output<typeof limitResult>;
+
+export const ledgerRow = z.object({
+  element: z.string(),
+  tollDb: decibels,
+  savedIfIdealDb: decibels,
+  savedRangeDb: z.tuple([decibels, decibels]),
+  allotmentDb: z.number().optional(),
+});
+export type LedgerRow = z.output<typeof ledgerRow>;
+
+export const ledger = z.object({
+  atHz: z.number(),
+  limitId: z.string().optional(),
+  limitDb: decibels.optional(),
+  totalDb: decibels,
+  reflectionDb: decibels,
+  reserveDb: decibels.optional(),
+  rows: z.array(ledgerRow),
+});
+export type Ledger = z.output<typeof ledger>;
+
+const lineMode = z.object({
+  z0Ohm: z.number(),
+  effectivePermittivity: z.number(),
+  conductorLossDbPerM: z.array(z.number()),
+  dielectricLossDbPerM: z.array(z.number()),
+});
+export const lineResult = z.object({
+  element: z.string(),
+  modes: z.object({ single: lineMode.optional(), even: lineMode.optional(), odd: lineMode.optional() }),
+});
+
+/** The whole result of a check, as scripts read it. `s[point][row][column] = [re, im]`. */
+export const channelResponse = z.object({
+  format: z.literal(responseFormat),
+  engine: z.string(),
+  fingerprint: z.string(),
+  ports: z.number(),
+  referenceOhm: z.array(complexNumber),
+  frequenciesHz: z.array(z.number()),
+  s: z.array(matrix),
+  /** 4 ports only; rows and columns d near, d far, c near, c far. */
+  mixedMode: z.array(matrix),
+  mixedModeReferenceOhm: z.array(complexNumber),
+  limits: z.array(limitResult),
+  lines: z.array(lineResult),
+  ledger: z.array(ledger),
+});
+export type ChannelResponse = z.output<typeof channelResponse>;

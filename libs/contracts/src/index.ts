@@ -1,0 +1,18 @@
+export * from './bounds';
+export * from './problems';
+export * from './quantity';
+export * from './rights';
+export * from './channel-file/channel-file';
+export * from './channel-file/circuit-kinds';
+export * from './channel-file/common';
+export * from './channel-file/complete';
+export * from './channel-file/kinds';
+export * from './channel-file/limits';
+export * from './channel-file/parse';
+export * from './channel-file/stackup';
+export { portOrders, type PortOrder, type PortPicks } from './channel-file/touchstone-kind';
+export * from './check/response';
+export * from './check/verdicts';
+export * from './check/view';
+export * as api from './api';
+export type * from './api';
