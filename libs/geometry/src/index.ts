@@ -1,0 +1,2 @@
+export * from './polyline';
+export * from './pair';
