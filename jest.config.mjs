@@ -14,7 +14,7 @@ export default {
     {
       ...node,
       displayName: 'server',
-      testMatch: ['<rootDir>/{server,test/api,test/faults,test/reference,tools}/**/*.spec.ts'],
+      testMatch: ['<rootDir>/{server,test/api,test/faults,test/reference,test/structure,tools}/**/*.spec.ts'],
     },
     {
       displayName: 'web',
