@@ -4,6 +4,7 @@ export * from './cascade4';
 export * from './chain';
 export * from './complex';
 export * from './loss';
+export * from './matrix';
 export * from './maximum-gain';
 export * from './mixed-mode';
 export * from './network';

@@ -1,0 +1,3 @@
+export { createTouchstoneReader, readTouchstone } from './reader';
+export type { TouchstoneReader } from './reader';
+export * from './touchstone-file';
