@@ -1,0 +1,42 @@
+import { NgTemplateOutlet } from '@angular/common';
+import { ChangeDetectionStrategy, Component, computed, inject } from '@angular/core';
+import { RouterLink, RouterLinkActive, RouterOutlet } from '@angular/router';
+import { Availability } from '../api/availability';
+import { GateMark } from '../marks/gate-mark';
+import { paths } from '../paths';
+import { SessionStore } from '../session/session-store';
+import { ToastList } from '../states/toast-list';
+import { BarContent } from './bar-content';
+import { PersonMenu } from './person-menu';
+import type { Place } from './place';
+
+/** The frame around every screen: bar, navigation, notices, and the place where pages appear. */
+@Component({
+  selector: 'tg-shell',
+  imports: [GateMark, NgTemplateOutlet, PersonMenu, RouterLink, RouterLinkActive, RouterOutlet, ToastList],
+  changeDetection: ChangeDetectionStrategy.OnPush,
+  templateUrl: './shell.html',
+  styleUrl: './shell.scss',
+})
+export class Shell {
+  protected readonly session = inject(SessionStore);
+  protected readonly away = inject(Availability).away;
+  protected readonly bar = inject(BarContent).template;
+  protected readonly paths = paths;
+
+  /** Only what works and what the person may see. */
+  protected readonly places = computed<readonly Place[]>(() => {
+    if (this.session.person() === null) return [];
+    return [
+      { name: 'Boards', link: paths.boards },
+      ...(this.session.may('people.list') ? [{ name: 'People', link: paths.people }] : []),
+      ...(this.session.demonstration() ? [{ name: 'Mail', link: paths.mail }] : []),
+    ];
+  });
+
+  /** A fragment link would go through the base address: the focus is moved by hand. */
+  protected skipToContent(content: HTMLElement, event: Event): void {
+    event.preventDefault();
+    content.focus();
+  }
+}
