@@ -1,3 +1,4 @@
+export { needsWaves, networkOfFile } from './part';
 export { createTouchstoneReader, readTouchstone } from './reader';
 export type { TouchstoneReader } from './reader';
 export * from './touchstone-file';
