@@ -311,18 +311,26 @@ class Reader implements TouchstoneReader {
 
   private takeData(bytes: Uint8Array, start: number, end: number, line: number): void {
     if (this.section === 'header' || this.section === 'reference') {
-      if (this.keywords.version && this.keywords.version !== '1.0') {
-        this.refuse(
-          line,
-          `"${this.textOf(bytes, start, end).slice(0, 40)}" stands before [Network Data].`,
-          'Put data behind [Network Data].',
-        );
-      }
+      if (this.keywords.version && this.keywords.version !== '1.0')
+        this.missingNetworkData(bytes, start, end, line);
       this.section = 'network';
       this.begin(line);
     }
     if (this.section === 'end')
       this.refuse(line, 'Data stand behind [End].', 'Remove them, or move [End] to the end.');
     this.data?.take(bytes, start, end, line);
+  }
+
+  /** Data without their keyword: unambiguous where ports and frequencies are known, as in an example of the specification. */
+  private missingNetworkData(bytes: Uint8Array, start: number, end: number, line: number): void {
+    const { ports, frequencies } = this.keywords;
+    const first = bytes[start]!;
+    const number = (first >= 48 && first <= 57) || first === 43 || first === 45 || first === 46;
+    if (number && ports !== undefined && frequencies !== undefined) {
+      this.warn(line, '[Network Data] is missing before the data.');
+      return;
+    }
+    const text = this.textOf(bytes, start, end).slice(0, 40);
+    this.refuse(line, `"${text}" stands before [Network Data].`, 'Put data behind [Network Data].');
   }
 }
