@@ -63,39 +63,49 @@ export function modeReferences(modes: readonly ModeOfPorts[], portOhm: readonly 
   return references;
 }
 
-/** S of the single-ended ports from S of the modes, in place: S = M^T S_mm M, M orthogonal (formula A6). */
-export function modesToPorts(entries: Float64Array, points: number, modes: readonly ModeOfPorts[]): void {
+/** Rows of M: the modes in the ports, a_mode = M a_port; M is orthogonal (formula A6). */
+function modeMatrix(modes: readonly ModeOfPorts[]): Float64Array {
   const ports = modes.length;
   const m = new Float64Array(ports * ports);
   modes.forEach(({ mode, p, n }, row) => {
     m[row * ports + p] = mode === 'S' ? 1 : Math.SQRT1_2;
     if (n >= 0) m[row * ports + n] = mode === 'D' ? -Math.SQRT1_2 : Math.SQRT1_2;
   });
+  return m;
+}
+
+/** S of the single-ended ports from S of the modes, in place: S = M^T S_mm M. */
+export function modesToPorts(entries: Float64Array, points: number, modes: readonly ModeOfPorts[]): void {
+  const ports = modes.length;
+  const m = modeMatrix(modes);
+  const turned = m.map((_, k) => m[(k % ports) * ports + Math.floor(k / ports)]!);
+  transform(entries, points, ports, turned);
+}
+
+/** S of the modes from S of the single-ended ports, in place: S_mm = M S M^T. */
+export function portsToModes(entries: Float64Array, points: number, modes: readonly ModeOfPorts[]): void {
+  transform(entries, points, modes.length, modeMatrix(modes));
+}
+
+/** entries = L entries L^T at every point. */
+function transform(entries: Float64Array, points: number, ports: number, l: Float64Array): void {
   const half = new Float64Array(ports * ports * 2);
   for (let point = 0; point < points; point++) {
-    const at = point * ports * ports * 2;
-    for (let i = 0; i < ports; i++) {
-      for (let j = 0; j < ports; j++) {
-        let re = 0;
-        let im = 0;
-        for (let k = 0; k < ports; k++) {
-          re += entries[at + (i * ports + k) * 2]! * m[k * ports + j]!;
-          im += entries[at + (i * ports + k) * 2 + 1]! * m[k * ports + j]!;
+    const block = entries.subarray(point * ports * ports * 2, (point + 1) * ports * ports * 2);
+    for (let part = 0; part < 2; part++) {
+      for (let i = 0; i < ports; i++) {
+        for (let j = 0; j < ports; j++) {
+          let sum = 0;
+          for (let k = 0; k < ports; k++) sum += block[(i * ports + k) * 2 + part]! * l[j * ports + k]!;
+          half[(i * ports + j) * 2 + part] = sum;
         }
-        half[(i * ports + j) * 2] = re;
-        half[(i * ports + j) * 2 + 1] = im;
       }
-    }
-    for (let i = 0; i < ports; i++) {
-      for (let j = 0; j < ports; j++) {
-        let re = 0;
-        let im = 0;
-        for (let k = 0; k < ports; k++) {
-          re += m[k * ports + i]! * half[(k * ports + j) * 2]!;
-          im += m[k * ports + i]! * half[(k * ports + j) * 2 + 1]!;
+      for (let i = 0; i < ports; i++) {
+        for (let j = 0; j < ports; j++) {
+          let sum = 0;
+          for (let k = 0; k < ports; k++) sum += l[i * ports + k]! * half[(k * ports + j) * 2 + part]!;
+          block[(i * ports + j) * 2 + part] = sum;
         }
-        entries[at + (i * ports + j) * 2] = re;
-        entries[at + (i * ports + j) * 2 + 1] = im;
       }
     }
   }

@@ -59,6 +59,7 @@ class Reader implements TouchstoneReader {
   private commentCount = 0;
   private readonly warnings: FileWarning[] = [];
   private option: OptionLine | undefined;
+  private optionStated = false;
   private section: Section = 'header';
   private data: DataSection | undefined;
   private lastLine = 0;
@@ -179,13 +180,14 @@ class Reader implements TouchstoneReader {
   }
 
   private takeOption(bytes: Uint8Array, start: number, end: number, line: number): void {
-    if (this.option) {
+    if (this.optionStated) {
       this.warn(line, 'A second option line; the first one holds and this one is ignored.');
       return;
     }
     if (this.data) {
       this.refuse(line, 'The option line stands behind data.', 'Put it before the first data line.');
     }
+    this.optionStated = true;
     this.option = this.check(parseOptionLine(this.textOf(bytes, start, end)), line);
   }
 

@@ -1,0 +1,198 @@
+import type { Network } from '@tollgate/network';
+import { checkNetwork } from '@tollgate/network';
+import { placesOf } from './data-block';
+import { modeReferences, parseModeOrder, portsToModes } from './mixed-mode-order';
+import { unitPower } from './option-line';
+import { sToParameter } from './parameters';
+import type {
+  FrequencyUnit,
+  MatrixFormat,
+  NoiseRow,
+  NumberFormat,
+  Parameter,
+  TwoPortOrder,
+} from './touchstone-file';
+import { TouchstoneError } from './touchstone-file';
+
+export interface WriteOptions {
+  /** Version 1.1 takes one real reference for all ports; 2.0 one a port. */
+  readonly version: '1.1' | '2.0';
+  /** Default RI, which loses nothing. */
+  readonly format?: NumberFormat;
+  /** Default Hz. */
+  readonly unit?: FrequencyUnit;
+  /** Default S. */
+  readonly parameter?: Parameter;
+  /** Lines put at the head, each behind a comment mark. */
+  readonly comments?: readonly string[];
+  readonly noise?: readonly NoiseRow[];
+  /** Version 2 only: default Full. Triangles are refused for what is not symmetric. */
+  readonly matrixFormat?: MatrixFormat;
+  /** Version 2 only: default 12_21. */
+  readonly twoPortOrder?: TwoPortOrder;
+  /** Version 2 only: writes mixed-mode data, such as `['D1,2', 'D3,4', 'C1,2', 'C3,4']`. */
+  readonly mixedModeOrder?: readonly string[];
+}
+
+const pointsAChunk = 256;
+/** 20 log10 of zero as a number that every reader takes: 1e-300. */
+const zeroDb = -6000;
+
+/**
+ * A network as Touchstone text. Numbers are written with the fewest digits that read back as the same double.
+ * @throws TouchstoneError for what the version cannot hold
+ */
+export function writeTouchstone(network: Network, options: WriteOptions): string {
+  return [...writeTouchstoneChunks(network, options)].join('');
+}
+
+/** The same in pieces, so that a large network needs no text of its size. */
+export function* writeTouchstoneChunks(network: Network, options: WriteOptions): Generator<string> {
+  checkNetwork(network);
+  const { ports, frequenciesHz } = network;
+  const version2 = options.version === '2.0';
+  const referenceOhm = realReferences(network, version2);
+  const entries = inWrittenForm(network, options, referenceOhm);
+  const matrixFormat = (version2 && options.matrixFormat) || 'Full';
+  if (matrixFormat !== 'Full') refuseAsymmetric(entries, ports);
+  const order: TwoPortOrder = version2 ? (options.twoPortOrder ?? '12_21') : '21_12';
+  yield header(network, options, referenceOhm, { version2, matrixFormat, order });
+  const places = placesOf(ports, matrixFormat, order);
+  const shift = unitPower[options.unit ?? 'Hz'];
+  const format = options.format ?? 'RI';
+  // A line ends after each row, and in version 1 after four pairs.
+  const ends = places.map(([row], k) => {
+    const next = places[k + 1];
+    if (!next) return true;
+    if (ports < 3) return false;
+    if (next[0] !== row) return true;
+    const inRow = places.slice(0, k + 1).filter(([r]) => r === row).length;
+    return !version2 && inRow % 4 === 0;
+  });
+  let text = '';
+  for (let point = 0; point < frequenciesHz.length; point++) {
+    text += shiftDecimal(frequenciesHz[point]!, shift);
+    for (let k = 0; k < places.length; k++) {
+      const [row, column] = places[k]!;
+      text += pair(entries, ((point * ports + row) * ports + column) * 2, format);
+      if (ends[k]) text += '\n';
+    }
+    if (point % pointsAChunk === pointsAChunk - 1) {
+      yield text;
+      text = '';
+    }
+  }
+  yield (
+    text + noiseText(options, shift, version2 ? 1 : referenceOhm[0]!, version2) + (version2 ? '[End]\n' : '')
+  );
+}
+
+function refuse(reason: string, mend: string): never {
+  throw new TouchstoneError('(output)', 0, reason, mend);
+}
+
+function realReferences(network: Network, version2: boolean): number[] {
+  const { ports, referenceOhm } = network;
+  if (referenceOhm.some((value, k) => k % 2 === 1 && value !== 0)) {
+    refuse('Touchstone has no place for complex references.', 'Renormalise to real references first.');
+  }
+  const real = Array.from({ length: ports }, (_, port) => referenceOhm[port * 2]!);
+  if (!version2 && real.some((z) => z !== real[0])) {
+    refuse('Version 1 has one reference for all ports.', 'Renormalise to one, or write version 2.0.');
+  }
+  return real;
+}
+
+function inWrittenForm(network: Network, options: WriteOptions, referenceOhm: number[]): Float64Array {
+  const { ports, frequenciesHz } = network;
+  const parameter = options.parameter ?? 'S';
+  const version2 = options.version === '2.0';
+  if ((parameter === 'H' || parameter === 'G') && ports !== 2) {
+    refuse(`${parameter} parameters are for 2 ports only.`, 'Write S parameters.');
+  }
+  if (!version2 && (options.mixedModeOrder || (options.matrixFormat ?? 'Full') !== 'Full')) {
+    refuse('Version 1 has no mixed modes and no triangles.', 'Write version 2.0.');
+  }
+  if (options.noise?.length && ports !== 2) refuse('Noise data are for 2 ports only.', 'Leave them out.');
+  if (parameter === 'S' && !options.mixedModeOrder) return network.s;
+  const entries = network.s.slice();
+  let modeOhm: number[] | null = referenceOhm;
+  if (options.mixedModeOrder) {
+    const modes = parseModeOrder(options.mixedModeOrder, ports);
+    if ('reason' in modes) refuse(modes.reason, modes.mend);
+    modeOhm = modeReferences(modes, referenceOhm);
+    if (!modeOhm) refuse('The ports of a pair have different references.', 'Renormalise them to one.');
+    portsToModes(entries, frequenciesHz.length, modes);
+  }
+  const job = { ports, points: frequenciesHz.length, referenceOhm: modeOhm };
+  const failed = sToParameter(entries, parameter, job, !version2);
+  if (failed >= 0) {
+    refuse(`There are no ${parameter} parameters at ${frequenciesHz[failed]} Hz.`, 'Write S parameters.');
+  }
+  return entries;
+}
+
+function refuseAsymmetric(entries: Float64Array, ports: number): void {
+  for (let entry = 0; entry < entries.length / 2; entry++) {
+    const inPoint = entry % (ports * ports);
+    const other = entry - inPoint + (inPoint % ports) * ports + Math.floor(inPoint / ports);
+    if (entries[entry * 2] !== entries[other * 2] || entries[entry * 2 + 1] !== entries[other * 2 + 1]) {
+      refuse('A triangle cannot hold a matrix that is not symmetric.', 'Write the full matrix.');
+    }
+  }
+}
+
+function header(
+  network: Network,
+  options: WriteOptions,
+  referenceOhm: readonly number[],
+  form: { version2: boolean; matrixFormat: MatrixFormat; order: TwoPortOrder },
+): string {
+  const { ports, frequenciesHz } = network;
+  const lines = (options.comments ?? []).map((text) => `! ${text.replace(/[\r\n]+/g, ' ')}`);
+  const option = `# ${options.unit ?? 'Hz'} ${options.parameter ?? 'S'} ${options.format ?? 'RI'} R ${referenceOhm[0]}`;
+  if (!form.version2) return `${[...lines, option].join('\n')}\n`;
+  lines.push('[Version] 2.0', option, `[Number of Ports] ${ports}`);
+  if (ports === 2) lines.push(`[Two-Port Data Order] ${form.order}`);
+  lines.push(`[Number of Frequencies] ${frequenciesHz.length}`);
+  if (options.noise?.length) lines.push(`[Number of Noise Frequencies] ${options.noise.length}`);
+  lines.push(`[Reference] ${referenceOhm.join(' ')}`, `[Matrix Format] ${form.matrixFormat}`);
+  if (options.mixedModeOrder) lines.push(`[Mixed-Mode Order] ${options.mixedModeOrder.join(' ')}`);
+  lines.push('[Network Data]');
+  return `${lines.join('\n')}\n`;
+}
+
+function pair(entries: Float64Array, at: number, format: NumberFormat): string {
+  const re = entries[at]!;
+  const im = entries[at + 1]!;
+  if (format === 'RI') return ` ${re} ${im}`;
+  const size = Math.hypot(re, im);
+  const angle = (Math.atan2(im, re) * 180) / Math.PI;
+  if (format === 'MA') return ` ${size} ${angle}`;
+  return ` ${size === 0 ? zeroDb : 20 * Math.log10(size)} ${angle}`;
+}
+
+function noiseText(options: WriteOptions, shift: number, referenceOhm: number, version2: boolean): string {
+  if (!options.noise?.length) return '';
+  const rows = options.noise.map(
+    (row) =>
+      `${shiftDecimal(row.frequencyHz, shift)} ${row.minimumNoiseFigureDb} ${row.optimumReflectionMagnitude} ` +
+      `${row.optimumReflectionAngleDeg} ${row.noiseResistanceOhm / referenceOhm}\n`,
+  );
+  return `${version2 ? '[Noise Data]' : '! noise'}\n${rows.join('')}`;
+}
+
+/** value / 10^power in decimal digits, so that reading it back in that unit gives the same double. */
+export function shiftDecimal(value: number, power: number): string {
+  const text = String(value);
+  if (power === 0 || value === 0) return text;
+  const match = /^(\d+)(?:\.(\d+))?(?:e([+-]\d+))?$/.exec(text);
+  if (!match) return text;
+  const digits = match[1]! + (match[2] ?? '');
+  const point = match[1]!.length + Number(match[3] ?? 0) - power;
+  const padded = point <= 0 ? '0'.repeat(1 - point) + digits : digits.padEnd(point, '0');
+  const at = Math.max(1, point);
+  const whole = padded.slice(0, at).replace(/^0+(?=\d)/, '');
+  const fraction = padded.slice(at).replace(/0+$/, '');
+  return fraction ? `${whole}.${fraction}` : whole;
+}
