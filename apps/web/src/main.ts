@@ -1,8 +1,10 @@
-import { bootstrapApplication } from '@angular/platform-browser';
-import { appConfig } from './app/app.config';
-import { Shell } from './app/shell/shell';
+import * as z from 'zod';
 
-bootstrapApplication(Shell, appConfig).catch((error: unknown) => {
+// The page's content policy forbids compiling code from text: zod must not even try, and it tries as soon as a schema
+// is defined. Hence this before anything that imports the contracts.
+z.config({ jitless: true });
+
+import('./app/start')
+  .then((file) => file.start())
   // Nothing of the app stands at this point: the browser's own report is all there is.
-  reportError(error);
-});
+  .catch((error: unknown) => reportError(error));

@@ -1,3 +1,4 @@
+import { APP_BASE_HREF } from '@angular/common';
 import { provideHttpClient, withFetch, withInterceptors } from '@angular/common/http';
 import { ErrorHandler, provideBrowserGlobalErrorListeners, type ApplicationConfig } from '@angular/core';
 import {
@@ -20,6 +21,8 @@ import { UnexpectedErrors } from './shell/unexpected-errors';
  */
 export const appConfig: ApplicationConfig = {
   providers: [
+    // No <base> in the page: its content policy refuses one.
+    { provide: APP_BASE_HREF, useValue: '/' },
     provideBrowserGlobalErrorListeners(),
     provideHttpClient(withFetch(), withInterceptors([csrfInterceptor, problemInterceptor])),
     provideRouter(
