@@ -1,13 +1,56 @@
 /** Powers of ten that a double holds exactly; with a mantissa up to 2^53 one operation rounds correctly. */
 const exactPowers = Float64Array.from({ length: 23 }, (_, k) => Number(`1e${k}`));
-const exactMantissa = 2 ** 53;
+
+/** Powers of ten as unevaluated sums of two doubles, for mantissas of up to 22 digits. */
+const mostPower = 60;
+const powerHigh = Float64Array.from({ length: mostPower + 1 }, (_, k) => Number(`1e${k}`));
+const powerLow = Float64Array.from({ length: mostPower + 1 }, (_, k) =>
+  Number(10n ** BigInt(k) - BigInt(powerHigh[k]!)),
+);
+/** Digits up to here go to the first part of a mantissa, which stays below 2^53. */
+const firstPart = 900719925474099;
+const mostLowDigits = 7;
+/** Veltkamp's splitter for doubles (T. J. Dekker, Numer. Math. 18, 1971). */
+const splitter = 134217729;
 
 /** Why a token is no number. */
 export type ScanFault = 'comma' | 'token';
 
 /**
- * Reads the numbers of one line of bytes. Correctly rounded: the usual token costs one multiplication or division, anything longer
- * goes through the language's own parser.
+ * (first 10^lowDigits + low)/10^power, rounded to the nearest double: both sides are held as sums of two doubles, 106 bits. Where the
+ * result lies too near the middle of two doubles to be sure, it gives -1.
+ */
+function quotient(first: number, low: number, lowDigits: number, power: number): number {
+  const factor = exactPowers[lowDigits]!;
+  let high = first * factor;
+  let rest = productError(first, factor, high) + low;
+  const sum = high + rest;
+  rest -= sum - high;
+  high = sum;
+  const divisor = powerHigh[power]!;
+  const q = high / divisor;
+  const product = q * divisor;
+  const remainder = high - product - productError(q, divisor, product) + rest - q * powerLow[power]!;
+  const correction = remainder / divisor;
+  const value = q + correction;
+  const left = correction - (value - q);
+  return value + left * 1.000001 === value ? value : -1;
+}
+
+/** The rounding error of a product of two doubles: a b - product, exactly (Dekker). */
+function productError(a: number, b: number, product: number): number {
+  const ca = splitter * a;
+  const aHigh = ca - (ca - a);
+  const aLow = a - aHigh;
+  const cb = splitter * b;
+  const bHigh = cb - (cb - b);
+  const bLow = b - bHigh;
+  return aLow * bLow - (product - aHigh * bHigh - aLow * bHigh - aHigh * bLow);
+}
+
+/**
+ * Reads the numbers of one line of bytes. Correctly rounded: up to 15 digits cost one multiplication or division, up to 22 a
+ * double-double division, anything else goes through the language's own parser.
  */
 export class NumberScanner {
   values = new Float64Array(256);
@@ -45,17 +88,27 @@ export class NumberScanner {
         c = bytes[++k]!;
       } else if (c === 43) c = bytes[++k]!;
       let mantissa = 0;
+      let low = 0;
+      let lowDigits = 0;
       let exponent = 0;
       let digits = 0;
       while (c >= 48 && c <= 57) {
-        mantissa = mantissa * 10 + (c - 48);
+        if (mantissa < firstPart) mantissa = mantissa * 10 + (c - 48);
+        else {
+          low = low * 10 + (c - 48);
+          lowDigits++;
+        }
         digits++;
         c = bytes[++k]!;
       }
       if (c === 46) {
         c = bytes[++k]!;
         while (c >= 48 && c <= 57) {
-          mantissa = mantissa * 10 + (c - 48);
+          if (mantissa < firstPart) mantissa = mantissa * 10 + (c - 48);
+          else {
+            low = low * 10 + (c - 48);
+            lowDigits++;
+          }
           exponent--;
           digits++;
           c = bytes[++k]!;
@@ -99,9 +152,15 @@ export class NumberScanner {
       }
       if (count === 0) exponent += shift;
       let value: number;
-      if (mantissa <= exactMantissa && exponent >= -22 && exponent <= 22) {
+      if (lowDigits === 0 && exponent >= -22 && exponent <= 22) {
         value = exponent < 0 ? mantissa / exactPowers[-exponent]! : mantissa * exactPowers[exponent]!;
-      } else value = this.slow(bytes, from, k, count === 0 ? shift : 0);
+      } else {
+        value =
+          lowDigits <= mostLowDigits && exponent <= 0 && exponent >= -mostPower
+            ? quotient(mantissa, low, lowDigits, -exponent)
+            : -1;
+        if (value < 0) value = this.slow(bytes, from, k, count === 0 ? shift : 0);
+      }
       if (count === this.values.length) this.grow();
       this.values[count++] = negative && value > 0 ? -value : value;
     }

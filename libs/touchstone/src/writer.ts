@@ -57,25 +57,16 @@ export function* writeTouchstoneChunks(network: Network, options: WriteOptions):
   if (matrixFormat !== 'Full') refuseAsymmetric(entries, ports);
   const order: TwoPortOrder = version2 ? (options.twoPortOrder ?? '12_21') : '21_12';
   yield header(network, options, referenceOhm, { version2, matrixFormat, order });
-  const places = placesOf(ports, matrixFormat, order);
+  const lines = linesOfPoint(placesOf(ports, matrixFormat, order), ports, version2);
   const shift = unitPower[options.unit ?? 'Hz'];
   const format = options.format ?? 'RI';
-  // A line ends after each row, and in version 1 after four pairs.
-  const ends = places.map(([row], k) => {
-    const next = places[k + 1];
-    if (!next) return true;
-    if (ports < 3) return false;
-    if (next[0] !== row) return true;
-    const inRow = places.slice(0, k + 1).filter(([r]) => r === row).length;
-    return !version2 && inRow % 4 === 0;
-  });
   let text = '';
   for (let point = 0; point < frequenciesHz.length; point++) {
     text += shiftDecimal(frequenciesHz[point]!, shift);
-    for (let k = 0; k < places.length; k++) {
-      const [row, column] = places[k]!;
-      text += pair(entries, ((point * ports + row) * ports + column) * 2, format);
-      if (ends[k]) text += '\n';
+    // Joining an array of numbers is the fastest way the language has to print them: half the time of adding strings.
+    for (const { offsets, numbers } of lines) {
+      fillLine(numbers, entries, point * ports * ports * 2, offsets, format);
+      text += ` ${numbers.join(' ')}\n`;
     }
     if (point % pointsAChunk === pointsAChunk - 1) {
       yield text;
@@ -162,14 +153,51 @@ function header(
   return `${lines.join('\n')}\n`;
 }
 
-function pair(entries: Float64Array, at: number, format: NumberFormat): string {
-  const re = entries[at]!;
-  const im = entries[at + 1]!;
-  if (format === 'RI') return ` ${re} ${im}`;
-  const size = Math.hypot(re, im);
-  const angle = (Math.atan2(im, re) * 180) / Math.PI;
-  if (format === 'MA') return ` ${size} ${angle}`;
-  return ` ${size === 0 ? zeroDb : 20 * Math.log10(size)} ${angle}`;
+interface Line {
+  /** Where the entries of the line begin within a point. */
+  readonly offsets: readonly number[];
+  readonly numbers: number[];
+}
+
+/** Each row of a matrix of 3 or more ports on lines of its own, in version 1 of four pairs at most; else one line. */
+function linesOfPoint(
+  places: readonly (readonly [number, number])[],
+  ports: number,
+  version2: boolean,
+): Line[] {
+  const lines: number[][] = [];
+  let row = -1;
+  for (const [r, column] of places) {
+    const last = lines[lines.length - 1];
+    const offset = (r * ports + column) * 2;
+    const full = !version2 && ports > 2 && last?.length === 4;
+    if (!last || full || (ports > 2 && r !== row)) lines.push([offset]);
+    else last.push(offset);
+    row = r;
+  }
+  return lines.map((offsets) => ({ offsets, numbers: new Array<number>(offsets.length * 2).fill(0) }));
+}
+
+function fillLine(
+  numbers: number[],
+  entries: Float64Array,
+  base: number,
+  offsets: readonly number[],
+  format: NumberFormat,
+): void {
+  for (let k = 0; k < offsets.length; k++) {
+    const re = entries[base + offsets[k]!]!;
+    const im = entries[base + offsets[k]! + 1]!;
+    if (format === 'RI') {
+      numbers[k * 2] = re;
+      numbers[k * 2 + 1] = im;
+      continue;
+    }
+    const size = Math.hypot(re, im);
+    if (format === 'MA') numbers[k * 2] = size;
+    else numbers[k * 2] = size === 0 ? zeroDb : 20 * Math.log10(size);
+    numbers[k * 2 + 1] = (Math.atan2(im, re) * 180) / Math.PI;
+  }
 }
 
 function noiseText(options: WriteOptions, shift: number, referenceOhm: number, version2: boolean): string {
