@@ -45,17 +45,19 @@ export class EventStream {
     };
   }).pipe(share());
 
-  /** Events about one thing, and polls. */
-  about(subject: Subject): Observable<StreamEvent> {
-    const wanted = Object.entries(subject) as [keyof Subject, string][];
-    return this.events.pipe(
-      filter((event) => event.what === pollEvent || wanted.every(([key, value]) => event[key] === value)),
-    );
+  /** Events about one thing, and polls; the thing is asked for with each event, so that it may follow an input. */
+  about(subject: () => Subject): Observable<StreamEvent> {
+    return this.events.pipe(filter((event) => event.what === pollEvent || isAbout(event, subject())));
   }
 
   private address(): string {
     return this.lastSeq === undefined ? '/api/stream' : `/api/stream?since=${this.lastSeq}`;
   }
+}
+
+function isAbout(event: StreamEvent, subject: Subject): boolean {
+  const wanted = Object.entries(subject) as [keyof Subject, string][];
+  return wanted.every(([key, value]) => event[key] === value);
 }
 
 function poll(seq: number): StreamEvent {

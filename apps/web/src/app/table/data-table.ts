@@ -42,7 +42,10 @@ export class DataTable<Row extends object> {
 
   readonly caption = input.required<string>();
   readonly columns = input.required<readonly Column<Row>[]>();
-  readonly source = input.required<ResourceRef<readonly Row[] | undefined>>();
+  /** What loads the rows; the table shows that it waits, and what went wrong. */
+  readonly source = input<ResourceRef<readonly Row[] | undefined>>();
+  /** Rows that are there already, in place of a source. */
+  readonly rows = input<readonly Row[]>();
   readonly rowKey = input.required<(row: Row) => string | number>();
   /** Prefix of this table's parameters in the address. */
   readonly name = input('');
@@ -59,7 +62,12 @@ export class DataTable<Row extends object> {
   protected readonly order = computed(() =>
     readOrder(this.query().get(this.parameter('sort')) ?? this.defaultSort()),
   );
-  protected readonly all = computed(() => (this.source().hasValue() ? (this.source().value() ?? []) : []));
+  private readonly loaded = computed(() => {
+    const source = this.source();
+    return this.rows() ?? (source?.hasValue() ? source.value() : undefined);
+  });
+  protected readonly waiting = computed(() => this.loaded() === undefined);
+  protected readonly all = computed(() => this.loaded() ?? []);
   private readonly shown = computed(() => {
     const words = this.filterText().toLocaleLowerCase().split(/\s+/).filter(Boolean);
     const textOf = this.filterBy();

@@ -1,0 +1,43 @@
+import { DatePipe } from '@angular/common';
+import { ChangeDetectionStrategy, Component, computed, input } from '@angular/core';
+import { daysTo, daysWords } from './release';
+
+/** When a revision is released, and how long that is from today. */
+@Component({
+  selector: 'tg-release-date',
+  imports: [DatePipe],
+  changeDetection: ChangeDetectionStrategy.OnPush,
+  template: `
+    @if (on(); as date) {
+      <span class="date">{{ date | date: 'd MMM y' }}</span>
+      <span class="days" [class.over]="days() < 0">{{ words() }}</span>
+    } @else {
+      <span class="days">no date</span>
+    }
+  `,
+  styles: `
+    :host {
+      display: inline-flex;
+      flex-wrap: wrap;
+      gap: 0 var(--tg-space-3);
+      font-variant-numeric: tabular-nums;
+    }
+    .date {
+      min-width: 84px;
+      white-space: nowrap;
+    }
+    .days {
+      color: var(--tg-slate);
+      white-space: nowrap;
+    }
+    .over {
+      color: var(--tg-oxide);
+    }
+  `,
+})
+export class ReleaseDate {
+  readonly on = input.required<string | null>();
+
+  protected readonly days = computed(() => daysTo(this.on() ?? '', new Date()));
+  protected readonly words = computed(() => daysWords(this.days()));
+}
