@@ -30,8 +30,10 @@ export class DataBlock {
     this.mirror = Int32Array.from(places, ([row, column]) =>
       matrixFormat === 'Full' ? (row * ports + column) * 2 : (column * ports + row) * 2,
     );
-    this.frequencies = new Float64Array(64);
-    this.entries = new Float64Array(64 * ports * ports * 2);
+    // A claim of many ports costs nothing before its data arrive.
+    const first = Math.max(1, Math.min(64, Math.floor(8192 / (ports * ports))));
+    this.frequencies = new Float64Array(first);
+    this.entries = new Float64Array(first * ports * ports * 2);
   }
 
   /** True between the frequency of a point and its last pair. */

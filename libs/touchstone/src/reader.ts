@@ -124,8 +124,9 @@ class Reader implements TouchstoneReader {
     if (line === 1 && bytes[start] === 0xef && bytes[start + 1] === 0xbb && bytes[start + 2] === 0xbf)
       start += 3;
     if (line === 1) this.refuseForeign(bytes, start, end);
-    while (start < end && (bytes[start]! <= 32 || bytes[start] === 0xa0)) start++;
-    if (start >= end) return;
+    while (start < end && isSpace(bytes[start]!)) start++;
+    // A lone 26 is the end mark of old DOS files.
+    if (start >= end || (start === end - 1 && bytes[start] === 26)) return;
     this.lastLine = line;
     const first = bytes[start]!;
     if (first === 33) {
@@ -335,4 +336,8 @@ class Reader implements TouchstoneReader {
     const text = this.textOf(bytes, start, end).slice(0, 40);
     this.refuse(line, `"${text}" stands before [Network Data].`, 'Put data behind [Network Data].');
   }
+}
+
+function isSpace(byte: number): boolean {
+  return byte === 32 || (byte >= 9 && byte <= 13) || byte === 0xa0;
 }
