@@ -25,11 +25,11 @@ export class DataBlock {
     order: TwoPortOrder,
     private readonly format: NumberFormat,
   ) {
-    const places = placesOf(ports, matrixFormat, order);
-    this.target = Int32Array.from(places, ([row, column]) => (row * ports + column) * 2);
-    this.mirror = Int32Array.from(places, ([row, column]) =>
-      matrixFormat === 'Full' ? (row * ports + column) * 2 : (column * ports + row) * 2,
-    );
+    this.target = entryOffsets(ports, matrixFormat, order);
+    this.mirror =
+      matrixFormat === 'Full'
+        ? this.target
+        : this.target.map((at) => ((at / 2) % ports) * ports * 2 + Math.floor(at / 2 / ports) * 2);
     // A claim of many ports costs nothing before its data arrive.
     const first = Math.max(1, Math.min(64, Math.floor(8192 / (ports * ports))));
     this.frequencies = new Float64Array(first);
@@ -118,21 +118,15 @@ export class DataBlock {
   }
 }
 
-/** Row and column of each pair in file order. */
-export function placesOf(ports: number, matrixFormat: MatrixFormat, order: TwoPortOrder): [number, number][] {
-  const places: [number, number][] = [];
-  if (ports === 2 && matrixFormat === 'Full' && order === '21_12') {
-    return [
-      [0, 0],
-      [1, 0],
-      [0, 1],
-      [1, 1],
-    ];
-  }
+/** Where the pairs of a point go, in file order: (row * ports + column) * 2. */
+export function entryOffsets(ports: number, matrixFormat: MatrixFormat, order: TwoPortOrder): Int32Array {
+  if (ports === 2 && matrixFormat === 'Full' && order === '21_12') return Int32Array.of(0, 4, 2, 6);
+  const offsets = new Int32Array(matrixFormat === 'Full' ? ports * ports : (ports * (ports + 1)) / 2);
+  let k = 0;
   for (let row = 0; row < ports; row++) {
     const first = matrixFormat === 'Upper' ? row : 0;
     const last = matrixFormat === 'Lower' ? row : ports - 1;
-    for (let column = first; column <= last; column++) places.push([row, column]);
+    for (let column = first; column <= last; column++) offsets[k++] = (row * ports + column) * 2;
   }
-  return places;
+  return offsets;
 }

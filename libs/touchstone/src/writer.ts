@@ -1,6 +1,6 @@
 import type { Network } from '@tollgate/network';
 import { checkNetwork } from '@tollgate/network';
-import { placesOf } from './data-block';
+import { entryOffsets } from './data-block';
 import { modeReferences, parseModeOrder, portsToModes } from './mixed-mode-order';
 import { unitPower } from './option-line';
 import { sToParameter } from './parameters';
@@ -57,7 +57,7 @@ export function* writeTouchstoneChunks(network: Network, options: WriteOptions):
   if (matrixFormat !== 'Full') refuseAsymmetric(entries, ports);
   const order: TwoPortOrder = version2 ? (options.twoPortOrder ?? '12_21') : '21_12';
   yield header(network, options, referenceOhm, { version2, matrixFormat, order });
-  const lines = linesOfPoint(placesOf(ports, matrixFormat, order), ports, version2);
+  const lines = linesOfPoint(entryOffsets(ports, matrixFormat, order), ports, version2);
   const shift = unitPower[options.unit ?? 'Hz'];
   const format = options.format ?? 'RI';
   let text = '';
@@ -160,22 +160,18 @@ interface Line {
 }
 
 /** Each row of a matrix of 3 or more ports on lines of its own, in version 1 of four pairs at most; else one line. */
-function linesOfPoint(
-  places: readonly (readonly [number, number])[],
-  ports: number,
-  version2: boolean,
-): Line[] {
+function linesOfPoint(offsets: Int32Array, ports: number, version2: boolean): Line[] {
   const lines: number[][] = [];
   let row = -1;
-  for (const [r, column] of places) {
+  for (const offset of offsets) {
     const last = lines[lines.length - 1];
-    const offset = (r * ports + column) * 2;
+    const ownRow = Math.floor(offset / (ports * 2));
     const full = !version2 && ports > 2 && last?.length === 4;
-    if (!last || full || (ports > 2 && r !== row)) lines.push([offset]);
+    if (!last || full || (ports > 2 && ownRow !== row)) lines.push([offset]);
     else last.push(offset);
-    row = r;
+    row = ownRow;
   }
-  return lines.map((offsets) => ({ offsets, numbers: new Array<number>(offsets.length * 2).fill(0) }));
+  return lines.map((own) => ({ offsets: own, numbers: new Array<number>(own.length * 2).fill(0) }));
 }
 
 function fillLine(

@@ -126,15 +126,20 @@ export function brokenFile(random: () => number): { name: string; text: string }
 export function numbersIn(text: string): number {
   let count = 0;
   let information = false;
-  let inReference = false;
+  const ports = Number(/\[\s*number\s+of\s+ports\s*\]\s*(\d+)/i.exec(text)?.[1] ?? 0);
+  let references = -1;
   const lines = /^[^\n]*\r[^\n]/.test(text) ? text.split('\r') : text.split('\n');
   for (const line of lines) {
     const plain = line.split('!')[0]!.trim();
     if (/^\[\s*begin information/i.test(plain)) information = true;
     if (/^\[\s*end information/i.test(plain)) information = false;
-    if (/^\[/.test(plain)) inReference = /^\[\s*reference/i.test(plain);
-    if (information || inReference || plain === '' || plain === '\u001a' || /^[#[]/.test(plain)) continue;
-    count += plain.split(/[\s\u00a0]+/).filter(Boolean).length;
+    const reference = /^\[\s*reference\s*\](.*)/i.exec(plain);
+    if (reference) references = reference[1]!.split(/\s+/).filter(Boolean).length;
+    else if (plain.startsWith('[')) references = -1;
+    if (information || plain === '' || plain === '\u001a' || /^[#[]/.test(plain)) continue;
+    const numbers = plain.split(/[\s\u00a0]+/).filter(Boolean).length;
+    if (references >= 0 && references < ports) references += numbers;
+    else count += numbers;
   }
   return count;
 }
