@@ -9,6 +9,7 @@ export * from './connect';
 export * from './dc-extension';
 export * from './deembed';
 export * from './grid';
+export * from './impedance-profile';
 export * from './interpolate';
 export * from './loss';
 export * from './matrix';
