@@ -1,4 +1,11 @@
+export * from './fit';
 export * from './formula/formula';
 export * from './formula/formula-error';
+export * from './judge';
+export * from './judgement';
 export * from './mask';
+export * from './meaning';
+export * from './outline';
+export { spokenHz } from './reach';
 export * from './subject';
+export { isConversion, modeEntry } from './values';

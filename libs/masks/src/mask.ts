@@ -7,7 +7,7 @@ export interface MaskPiece {
   readonly fromHz: number;
   readonly toHz: number;
   /** The limit at a frequency inside the piece: positive dB, or seconds for delay and skew. */
-  valueAt(frequencyHz: number): number;
+  readonly valueAt: (frequencyHz: number) => number;
 }
 
 /** A limit over frequency: pieces in ascending order, which may share ends (a step) or leave gaps (not judged). */
