@@ -31,7 +31,7 @@ export class BoardMembers {
       text: (member) => member.roles.map((role) => roleTitles[role]).join(', '),
     },
     since: { key: 'since', title: 'Member since', width: '140px', sortBy: (member) => member.since },
-    remove: { key: 'remove', title: '', width: '110px', align: 'end' },
+    remove: { key: 'remove', title: 'Remove', hiddenTitle: true, width: '110px', align: 'end' },
   } as const satisfies Record<string, Column<Member>>;
   protected readonly columnList = Object.values(this.columns);
   protected readonly rowKey = (member: Member) => member.personId;

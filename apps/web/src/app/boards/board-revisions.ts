@@ -30,8 +30,14 @@ export class BoardRevisions {
       title: 'Worst margin',
       sortBy: (revision) => revision.worst?.marginDb ?? null,
     },
-    release: { key: 'release', title: 'Release', width: '250px', sortBy: (revision) => revision.releaseOn },
+    release: { key: 'release', title: 'Release', width: '200px', sortBy: (revision) => revision.releaseOn },
+    change: { key: 'change', title: 'Change', hiddenTitle: true, width: '80px', align: 'end' },
   } as const satisfies Record<string, Column<RevisionSummary>>;
   protected readonly columnList = Object.values(this.columns);
   protected readonly rowKey = (revision: RevisionSummary) => revision.id;
+
+  protected note(revision: RevisionSummary): string {
+    const channels = `${revision.channels} ${revision.channels === 1 ? 'channel' : 'channels'}`;
+    return revision.archived ? `${channels}, archived` : channels;
+  }
 }

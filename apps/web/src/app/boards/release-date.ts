@@ -10,7 +10,7 @@ import { daysTo, daysWords } from './release';
   template: `
     @if (on(); as date) {
       <span class="date">{{ date | date: 'd MMM y' }}</span>
-      <span class="days" [class.over]="days() < 0">{{ words() }}</span>
+      <span class="days" [class.over]="days() < 0 && !passed()">{{ words() }}</span>
     } @else {
       <span class="days">no date</span>
     }
@@ -37,7 +37,9 @@ import { daysTo, daysWords } from './release';
 })
 export class ReleaseDate {
   readonly on = input.required<string | null>();
+  /** A later revision has taken its place: a date gone by is no delay. */
+  readonly passed = input(false);
 
   protected readonly days = computed(() => daysTo(this.on() ?? '', new Date()));
-  protected readonly words = computed(() => daysWords(this.days()));
+  protected readonly words = computed(() => daysWords(this.days(), this.passed()));
 }

@@ -7,9 +7,9 @@ export function daysTo(date: string, now: Date): number {
   return Math.round((Date.UTC(year, month - 1, day) - today) / dayMs);
 }
 
-/** "13 days to go", "today", "4 days over". */
-export function daysWords(days: number): string {
+/** "13 days to go", "today", "4 days over"; of something passed "4 days ago". */
+export function daysWords(days: number, passed = false): string {
   if (days === 0) return 'today';
   const count = `${Math.abs(days)} ${Math.abs(days) === 1 ? 'day' : 'days'}`;
-  return days > 0 ? `${count} to go` : `${count} over`;
+  return days > 0 ? `${count} to go` : `${count} ${passed ? 'ago' : 'over'}`;
 }

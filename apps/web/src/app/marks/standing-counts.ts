@@ -31,8 +31,11 @@ interface Count {
     }
     .count {
       display: inline-flex;
-      align-items: center;
+      align-items: baseline;
       gap: 7px;
+    }
+    tg-verdict-mark {
+      align-self: center;
     }
     .none {
       --tg-mark-size: 13px;

@@ -20,6 +20,8 @@ export class PersonMenu {
 
   readonly person = input.required<SignedInPerson>();
   readonly places = input.required<readonly Place[]>();
+  /** The bar shows the places itself, where it is wide enough. */
+  readonly placesInBar = input.required<boolean>();
 
   protected readonly paths = paths;
   protected readonly rolesText = computed(() =>

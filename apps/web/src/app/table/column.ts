@@ -3,6 +3,8 @@ export interface Column<Row> {
   /** Stands in the address when the table is sorted by it. */
   readonly key: string;
   readonly title: string;
+  /** The head is for screen readers only: a column of links says itself what it does. */
+  readonly hiddenTitle?: boolean;
   readonly text?: (row: Row) => string;
   /** What sorting compares; left out, the column does not sort. Nulls come last in both directions. */
   readonly sortBy?: (row: Row) => string | number | null;
