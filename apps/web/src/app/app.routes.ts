@@ -22,7 +22,7 @@ export const routes: Routes = [
     loadComponent: () => import('./session/reset').then((file) => file.Reset),
   },
   {
-    path: 'first-administrator/:token',
+    path: 'first/:token',
     title: titles.firstAdministrator,
     loadComponent: () => import('./session/first-administrator').then((file) => file.FirstAdministrator),
   },

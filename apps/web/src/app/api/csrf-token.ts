@@ -4,4 +4,6 @@ import { Injectable } from '@angular/core';
 @Injectable({ providedIn: 'root' })
 export class CsrfToken {
   value = '';
+  /** Whose session it is; empty for strangers. */
+  personId = '';
 }

@@ -18,6 +18,7 @@ import { WorstMargin } from './worst-margin';
   styleUrl: './board-list.scss',
 })
 export class BoardRevisions {
+  /** Newest first. */
   readonly revisions = input.required<readonly RevisionSummary[]>();
   readonly mayEdit = input.required<boolean>();
 

@@ -45,6 +45,9 @@ export class Board {
   });
   protected readonly board = computed(() => (this.source.hasValue() ? this.source.value() : undefined));
 
+  /** Newest first. */
+  protected readonly revisions = computed(() => [...(this.board()?.revisions ?? [])].reverse());
+
   constructor() {
     const title = inject(PageTitle);
     effect(() => {
@@ -90,7 +93,7 @@ export class Board {
   private openNewRevision() {
     const board = this.board();
     if (!board?.can.createRevision) return undefined;
-    return this.openRevisionDialog({ boardId: board.id, copies: board.revisions });
+    return this.openRevisionDialog({ boardId: board.id, copies: this.revisions() });
   }
 
   private openRevision(id: string) {

@@ -15,7 +15,7 @@ const typingMs = 300;
   imports: [ChoiceField, TextField],
   changeDetection: ChangeDetectionStrategy.OnPush,
   template: `
-    <tg-text-field label="What" hint="Such as channel.saved, or its beginning" [control]="kind" />
+    <tg-text-field label="Kind" hint="Or its beginning, such as board." [control]="kind" />
     <tg-choice-field label="Who" none="everybody" [choices]="choices()" [control]="person" />
   `,
   styles: `

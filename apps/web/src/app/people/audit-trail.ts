@@ -55,9 +55,9 @@ export class AuditTrail {
     seq: { key: 'seq', title: 'No.', width: '64px', text: (event) => String(event.seq) },
     at: { key: 'at', title: 'When', width: '170px' },
     who: { key: 'who', title: 'Who', width: '170px', text: (event) => event.who ?? 'the system' },
-    what: { key: 'what', title: 'What', width: '190px', text: (event) => event.what },
-    subject: { key: 'subject', title: 'On', width: '26%', text: (event) => event.subject },
-    detail: { key: 'detail', title: 'Detail', text: (event) => event.detail },
+    detail: { key: 'detail', title: 'What was done', text: (event) => event.detail },
+    what: { key: 'what', title: 'Kind', width: '210px', text: (event) => event.what },
+    subject: { key: 'subject', title: 'On', width: '110px' },
   } as const satisfies Record<string, Column<AuditEvent>>;
   protected readonly columnList = Object.values(this.columns);
   protected readonly rowKey = (event: AuditEvent) => event.seq;

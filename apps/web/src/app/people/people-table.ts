@@ -53,7 +53,7 @@ export class PeopleTable {
       width: '140px',
       sortBy: (person) => person.lastSignInAt,
     },
-    actions: { key: 'actions', title: 'Actions', hiddenTitle: true, width: '230px', align: 'end' },
+    actions: { key: 'actions', title: 'Actions', hiddenTitle: true, width: '210px' },
   } as const satisfies Record<string, Column<Person>>;
   protected readonly columnList = Object.values(this.columns);
   protected readonly rowKey = (person: Person) => person.id;

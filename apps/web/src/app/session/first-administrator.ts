@@ -38,7 +38,7 @@ export class FirstAdministrator {
   protected submit(): void {
     const body = () => ({ token: this.token(), ...this.form.getRawValue() });
     this.submission.send(
-      () => this.api.post('/administrator-claims', body()).pipe(switchMap(() => this.session.load())),
+      () => this.api.post('/first-administrator', body()).pipe(switchMap(() => this.session.load())),
       () => {
         this.toasts.done('You are the first administrator. Sign in, and invite your team.');
         void this.router.navigateByUrl(paths.signIn);

@@ -59,6 +59,7 @@ export class SessionStore {
 
   private take(session: Session): void {
     this.csrf.value = session.csrfToken;
+    this.csrf.personId = session.person?.id ?? '';
     this.state.set(session);
   }
 

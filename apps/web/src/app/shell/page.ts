@@ -37,13 +37,14 @@ import { Trail, type Step } from './trail';
     header {
       display: flex;
       flex-wrap: wrap;
-      align-items: flex-end;
+      align-items: flex-start;
       gap: var(--tg-space-3) var(--tg-space-5);
       min-height: 40px;
       margin-bottom: var(--tg-space-5);
     }
     .words {
       flex: 1 1 320px;
+      padding-top: 3px;
       min-width: 0;
       overflow-wrap: anywhere;
     }
