@@ -21,7 +21,7 @@ import { verdictWord } from './verdict-words';
       align-self: center;
     }
     :host([data-verdict='holds']) {
-      color: var(--tg-verdigris);
+      color: var(--tg-verdigris-word);
     }
     :host([data-verdict='exceeds']) {
       color: var(--tg-oxide);
