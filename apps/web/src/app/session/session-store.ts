@@ -1,8 +1,8 @@
 import { computed, inject, Injectable, signal } from '@angular/core';
-import { takeUntilDestroyed, toObservable } from '@angular/core/rxjs-interop';
+import { takeUntilDestroyed } from '@angular/core/rxjs-interop';
 import { Router } from '@angular/router';
 import { roleAllows, type Action, type Session, type SignIn } from '@tollgate/contracts';
-import { filter, map, switchMap, take, tap, type Observable } from 'rxjs';
+import { map, ReplaySubject, switchMap, take, tap, type Observable } from 'rxjs';
 import { ApiClient } from '../api/api-client';
 import { CsrfToken } from '../api/csrf-token';
 import { SignedOut } from '../api/signed-out';
@@ -17,6 +17,7 @@ export class SessionStore {
   private readonly api = inject(ApiClient);
   private readonly csrf = inject(CsrfToken);
   private readonly router = inject(Router);
+  private readonly known = new ReplaySubject<Session>(1);
   private readonly state = signal<Session | undefined>(undefined);
 
   /** Undefined until the server has answered. */
@@ -24,10 +25,7 @@ export class SessionStore {
   readonly person = computed(() => this.state()?.person ?? null);
   readonly demonstration = computed(() => this.state()?.demonstration ?? false);
   /** The session as soon as it is known; completes. */
-  readonly ready: Observable<Session> = toObservable(this.state).pipe(
-    filter((session) => session !== undefined),
-    take(1),
-  );
+  readonly ready: Observable<Session> = this.known.pipe(take(1));
 
   constructor() {
     inject(SignedOut)
@@ -61,6 +59,7 @@ export class SessionStore {
     this.csrf.value = session.csrfToken;
     this.csrf.personId = session.person?.id ?? '';
     this.state.set(session);
+    this.known.next(session);
   }
 
   private expired(): void {
