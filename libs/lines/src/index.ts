@@ -1,0 +1,11 @@
+export * from './conductor';
+export * from './constants';
+export * from './coupled-microstrip';
+export * from './cross-section';
+export * from './dielectric';
+export * from './line-error';
+export * from './microstrip';
+export type { ModeName } from './models';
+export * from './roughness';
+export * from './stripline';
+export * from './trace-line';
