@@ -128,7 +128,7 @@ export function numbersIn(text: string): number {
   let information = false;
   const ports = Number(/\[\s*number\s+of\s+ports\s*\]\s*(\d+)/i.exec(text)?.[1] ?? 0);
   let references = -1;
-  const lines = /^[^\n]*\r[^\n]/.test(text) ? text.split('\r') : text.split('\n');
+  const lines = /^[^\n]*\r[^\n]/.test(text) ? text.split(/[\r\n]/) : text.split('\n');
   for (const line of lines) {
     const plain = line.split('!')[0]!.trim();
     if (/^\[\s*begin information/i.test(plain)) information = true;
