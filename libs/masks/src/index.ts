@@ -1,3 +1,4 @@
+export * from './crosstalk';
 export * from './fit';
 export * from './formula/formula';
 export * from './formula/formula-error';

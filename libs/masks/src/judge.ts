@@ -8,10 +8,11 @@ import { refineWorst, type Track, type Worst } from './refine';
 import type { Subject } from './subject';
 import { isConversion, isTime, largestConversion, measureOf, type Measure } from './values';
 
-/** Margins this little below zero are rounding, not an excess. */
-const roundingDb = 1e-9;
-/** The refined worst margin is found to this, in dB; delays to this many picoseconds. */
+/** Margins this little below zero are rounding, not an excess: dB, or picoseconds. */
+const rounding = 1e-9;
+/** The refined worst margin is found to this: dB, or picoseconds. */
 const refinedTo = 1e-4;
+const picosecond = 1e-12;
 /** A model whose modes convert less than this (-180 dB) has no asymmetry. */
 const leastConversion = 1e-9;
 
@@ -30,10 +31,10 @@ export function judgeLimit(limit: Limit & { id: string }, mask: Mask, subject: S
   const value = fitted.onGrid();
   const valueDb = Array.from(value, finiteOrNull);
   if (!reach.band) return { ...blank, valueDb, reason: reach.reason, missingHz: reach.missingHz };
-  const sampled = sampleGrid(limit.sense, mask, subject.grid.frequenciesHz, value);
+  const sampled = sampleGrid(limit, mask, subject.grid.frequenciesHz, value);
   const refined = refine(limit, mask, subject, reach.band, fitted, value);
   const reason = refusal(limit, subject, reach, sampled, refined);
-  const holds = refined !== null && refined.margin >= -roundingDb;
+  const holds = refined !== null && refined.margin >= -allowed(limit, rounding);
   const verdict: LimitVerdict = reason !== '' ? 'not-judged' : holds ? 'holds' : 'exceeds';
   return {
     ...blank,
@@ -85,6 +86,11 @@ function marginOf(sense: 'max' | 'min', bound: number, value: number): number {
   return sense === 'max' ? bound - value : value - bound;
 }
 
+/** A tolerance in the limit's own unit. */
+function allowed(limit: Limit, amount: number): number {
+  return isTime(limit.quantity) ? amount * picosecond : amount;
+}
+
 interface Sampled {
   readonly worst: Worst | null;
   readonly exceedsHz: [number, number][];
@@ -92,12 +98,9 @@ interface Sampled {
   readonly undefinedHz: number | null;
 }
 
-function sampleGrid(
-  sense: 'max' | 'min',
-  mask: Mask,
-  frequenciesHz: Float64Array,
-  value: Float64Array,
-): Sampled {
+function sampleGrid(limit: Limit, mask: Mask, frequenciesHz: Float64Array, value: Float64Array): Sampled {
+  const { sense } = limit;
+  const slack = allowed(limit, rounding);
   let worst: Worst | null = null;
   let undefinedHz: number | null = null;
   const exceedsHz: [number, number][] = [];
@@ -108,7 +111,7 @@ function sampleGrid(
     const margin = bound === null ? null : marginOf(sense, bound, value[k]!);
     if (margin !== null && Number.isNaN(margin)) undefinedHz ??= frequencyHz;
     if (margin !== null && (worst === null || margin < worst.margin)) worst = { frequencyHz, margin };
-    const exceeds = margin !== null && margin < -roundingDb;
+    const exceeds = margin !== null && margin < -slack;
     if (exceeds && exceeding) exceedsHz.at(-1)![1] = frequencyHz;
     else if (exceeds) exceedsHz.push([frequencyHz, frequencyHz]);
     exceeding = exceeds;
@@ -149,8 +152,7 @@ function refine(
     const margins = frequenciesHz.map((f) => margin(part.piece, f, known.get(f)!));
     return { piece: part.piece, frequenciesHz, margins };
   });
-  const tolerance = isTime(limit.quantity) ? refinedTo * 1e-12 : refinedTo;
-  return refineWorst(tracks, (f) => measure.at(f), margin, tolerance);
+  return refineWorst(tracks, (f) => measure.at(f), margin, allowed(limit, refinedTo));
 }
 
 function clamp(value: number, least: number, most: number): number {
