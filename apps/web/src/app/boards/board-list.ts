@@ -48,7 +48,7 @@ export class BoardList {
   protected readonly next = computed(() => nextRelease(this.rows(), new Date()));
 
   protected readonly columns = {
-    name: { key: 'name', title: 'Board', width: '30%', sortBy: (board) => board.name },
+    name: { key: 'name', title: 'Board', width: '34%', sortBy: (board) => board.name },
     revision: { key: 'revision', title: 'Revision', width: '84px' },
     channels: {
       key: 'channels',
@@ -60,7 +60,7 @@ export class BoardList {
     release: {
       key: 'release',
       title: 'Release',
-      width: '200px',
+      width: '130px',
       sortBy: (board) => board.latest?.releaseOn ?? null,
     },
   } as const satisfies Record<string, Column<BoardSummary>>;

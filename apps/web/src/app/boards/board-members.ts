@@ -21,7 +21,7 @@ export class BoardMembers {
     name: {
       key: 'name',
       title: 'Name',
-      width: '30%',
+      width: '34%',
       sortBy: (member) => member.name,
       text: (member) => member.name,
     },
@@ -30,8 +30,8 @@ export class BoardMembers {
       title: 'Roles',
       text: (member) => member.roles.map((role) => roleTitles[role]).join(', '),
     },
-    since: { key: 'since', title: 'Member since', width: '140px', sortBy: (member) => member.since },
-    remove: { key: 'remove', title: 'Remove', hiddenTitle: true, width: '110px', align: 'end' },
+    since: { key: 'since', title: 'Member since', width: '130px', sortBy: (member) => member.since },
+    remove: { key: 'remove', title: 'Remove', hiddenTitle: true, width: '80px', align: 'end' },
   } as const satisfies Record<string, Column<Member>>;
   protected readonly columnList = Object.values(this.columns);
   protected readonly rowKey = (member: Member) => member.personId;

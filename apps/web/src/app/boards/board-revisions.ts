@@ -24,14 +24,14 @@ export class BoardRevisions {
 
   protected readonly paths = paths;
   protected readonly columns = {
-    letter: { key: 'letter', title: 'Revision', width: '30%', sortBy: (revision) => revision.letter },
+    letter: { key: 'letter', title: 'Revision', width: '34%', sortBy: (revision) => revision.letter },
     channels: { key: 'channels', title: 'Channels', width: '248px', sortBy: (revision) => revision.channels },
     worst: {
       key: 'worst',
       title: 'Worst margin',
       sortBy: (revision) => revision.worst?.marginDb ?? null,
     },
-    release: { key: 'release', title: 'Release', width: '200px', sortBy: (revision) => revision.releaseOn },
+    release: { key: 'release', title: 'Release', width: '130px', sortBy: (revision) => revision.releaseOn },
     change: { key: 'change', title: 'Change', hiddenTitle: true, width: '80px', align: 'end' },
   } as const satisfies Record<string, Column<RevisionSummary>>;
   protected readonly columnList = Object.values(this.columns);

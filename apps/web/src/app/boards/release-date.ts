@@ -17,18 +17,16 @@ import { daysTo, daysWords } from './release';
   `,
   styles: `
     :host {
-      display: inline-flex;
-      flex-wrap: wrap;
-      gap: 0 var(--tg-space-3);
+      display: block;
       font-variant-numeric: tabular-nums;
     }
-    .date {
-      min-width: 84px;
+    span {
+      display: block;
       white-space: nowrap;
     }
     .days {
       color: var(--tg-slate);
-      white-space: nowrap;
+      font-size: var(--tg-text-small);
     }
     .over {
       color: var(--tg-oxide);

@@ -21,22 +21,21 @@ import { paths } from '../paths';
   `,
   styles: `
     :host {
-      display: inline-flex;
-      gap: var(--tg-space-3);
+      display: block;
       font-variant-numeric: tabular-nums;
     }
     .margin {
-      flex: none;
-      min-width: 68px;
+      display: block;
       font-weight: 600;
-      text-align: end;
       white-space: nowrap;
     }
     .over {
       color: var(--tg-oxide);
     }
     .limit {
+      display: block;
       color: var(--tg-slate);
+      font-size: var(--tg-text-small);
       overflow-wrap: anywhere;
     }
     a {

@@ -30,6 +30,7 @@ export type Palette = Readonly<Record<(typeof colourNames)[number], string>>;
 export class ThemeStore {
   private readonly document = inject(DOCUMENT);
   private readonly view = this.document.defaultView!;
+  private readonly storage = storageOf(this.view);
   private readonly darkSystem = this.view.matchMedia('(prefers-color-scheme: dark)');
   private readonly systemIsDark = toSignal(
     fromEvent(this.darkSystem, 'change').pipe(
@@ -58,8 +59,8 @@ export class ThemeStore {
 
   choose(choice: ThemeChoice): void {
     this.choice.set(choice);
-    if (choice === 'system') this.view.localStorage.removeItem(storageKey);
-    else this.view.localStorage.setItem(storageKey, choice);
+    if (choice === 'system') this.storage?.removeItem(storageKey);
+    else this.storage?.setItem(storageKey, choice);
   }
 
   private apply(choice: ThemeChoice): void {
@@ -69,7 +70,17 @@ export class ThemeStore {
   }
 
   private remembered(): ThemeChoice {
-    const stored = this.view.localStorage.getItem(storageKey);
+    const stored = this.storage?.getItem(storageKey);
     return themeChoices.find((choice) => choice === stored) ?? 'system';
+  }
+}
+
+/** The browser's storage; undefined where the person has blocked it: the choice then lasts as long as the page. */
+function storageOf(view: Window): Storage | undefined {
+  try {
+    return view.localStorage;
+  } catch (error) {
+    if (error instanceof DOMException) return undefined;
+    throw error;
   }
 }
