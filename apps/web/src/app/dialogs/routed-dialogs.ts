@@ -16,7 +16,7 @@ export function routedDialogs(openers: Readonly<Record<string, Opener>>): void {
   const query = toSignal(route.queryParamMap, { requireSync: true });
   let shown: { address: string; ref: MatDialogRef<object, unknown> } | undefined;
 
-  effect((onCleanup) => {
+  effect(() => {
     const address = query().get('dialog') ?? '';
     if (shown && shown.address !== address) shown.ref.close();
     if (address === '' || shown?.address === address) return;
@@ -36,6 +36,5 @@ export function routedDialogs(openers: Readonly<Record<string, Opener>>): void {
         });
       }
     });
-    onCleanup(() => undefined);
   });
 }
