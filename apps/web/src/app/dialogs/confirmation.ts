@@ -33,6 +33,11 @@ export interface ConfirmationData {
       </button>
     </mat-dialog-actions>
   `,
+  styles: `
+    tg-form-failure:not(:empty) {
+      margin-top: var(--tg-space-3);
+    }
+  `,
 })
 export class Confirmation {
   private readonly ref = inject<MatDialogRef<Confirmation, boolean>>(MatDialogRef);
