@@ -18,14 +18,21 @@ let reply: Subject<unknown>;
 class Host {
   constructor() {
     const dialogs = inject(Dialogs);
+    const router = inject(Router);
+    const ask = (of: string) =>
+      dialogs.open<Confirmation, ConfirmationData, boolean>(Confirmation, {
+        heading: `Archive ${of}?`,
+        text: 'Nothing is lost.',
+        action: 'Archive',
+        run: () => reply,
+      });
     routedDialogs({
-      archive: (of) =>
-        dialogs.open<Confirmation, ConfirmationData, boolean>(Confirmation, {
-          heading: `Archive ${of}?`,
-          text: 'Nothing is lost.',
-          action: 'Archive',
-          run: () => reply,
-        }),
+      archive: ask,
+      lead: (of) => {
+        const ref = ask(of);
+        ref.afterClosed().subscribe(() => void router.navigateByUrl(`/${of}`));
+        return ref;
+      },
     });
   }
 }
@@ -81,6 +88,15 @@ describe('a dialog with an address', () => {
     expect(await shown()).toHaveLength(1);
     reply.next({});
     expect(await shown()).toHaveLength(0);
+  });
+
+  it('does not cut short where its result leads', async () => {
+    const { shown, press, router, harness } = await open('/?dialog=lead:elsewhere');
+    await press('Archive');
+    reply.next({});
+    await shown();
+    await harness.fixture.whenStable();
+    expect(router.url).toBe('/elsewhere');
   });
 
   it('stays open and says why when the server refuses', async () => {

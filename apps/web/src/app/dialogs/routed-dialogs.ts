@@ -27,14 +27,16 @@ export function routedDialogs(openers: Readonly<Record<string, Opener>>): void {
     shown = opened;
     ref.afterClosed().subscribe(() => {
       if (shown === opened) shown = undefined;
-      if (untracked(query).get('dialog') === address) {
+      // Who opened the dialog may go on to another page with its result: that is not to be cut short.
+      queueMicrotask(() => {
+        if (untracked(router.currentNavigation) || untracked(query).get('dialog') !== address) return;
         void router.navigate([], {
           relativeTo: route,
           queryParams: { dialog: null },
           queryParamsHandling: 'merge',
           replaceUrl: true,
         });
-      }
+      });
     });
   });
 }
