@@ -14,6 +14,9 @@ import type { FormFailure as Failure } from './submission';
         @if (failure.detail && failure.detail !== failure.title) {
           <p>{{ failure.detail }}</p>
         }
+        @if (failure.trace) {
+          <p class="trace">Noted in the log as {{ failure.trace }}</p>
+        }
         @if (failure.others.length) {
           <ul>
             @for (field of failure.others; track $index) {
@@ -37,6 +40,10 @@ import type { FormFailure as Failure } from './submission';
       padding: 2px 0 2px var(--tg-space-3);
       border-left: 3px solid var(--tg-oxide);
       overflow-wrap: anywhere;
+    }
+    .trace {
+      color: var(--tg-slate);
+      font-size: var(--tg-text-small);
     }
     strong {
       font-weight: 600;

@@ -10,6 +10,8 @@ import { landOnFields } from './server-errors';
 export interface FormFailure {
   readonly title: string;
   readonly detail: string;
+  /** How the log names it, where the fault is the server's. */
+  readonly trace: string;
   /** Problems of fields this form does not show. */
   readonly others: readonly FieldProblem[];
 }
@@ -46,10 +48,10 @@ export class Submission {
   }
 
   private fail(error: unknown): void {
-    const { title, detail, fields } = apiProblemOf(error).problem;
+    const { title, detail, fields, status, instance } = apiProblemOf(error).problem;
     const others = landOnFields(this.form, fields);
     const landed = fields.length > 0 && others.length === 0;
-    if (!landed) this.failureSignal.set({ title, detail, others });
+    if (!landed) this.failureSignal.set({ title, detail, trace: status >= 500 ? instance : '', others });
     else this.focusFirstError();
   }
 
