@@ -10,10 +10,7 @@ import type { FormFailure as Failure } from './submission';
   template: `
     @if (failure(); as failure) {
       <div class="box">
-        <strong>{{ failure.title }}</strong>
-        @if (failure.detail && failure.detail !== failure.title) {
-          <p>{{ failure.detail }}</p>
-        }
+        <p>{{ failure.text }}</p>
         @if (failure.trace) {
           <p class="trace">Noted in the log as {{ failure.trace }}</p>
         }
@@ -44,9 +41,6 @@ import type { FormFailure as Failure } from './submission';
     .trace {
       color: var(--tg-slate);
       font-size: var(--tg-text-small);
-    }
-    strong {
-      font-weight: 600;
     }
     ul {
       margin: var(--tg-space-1) 0 0;

@@ -8,8 +8,7 @@ import { landOnFields } from './server-errors';
 
 /** What went wrong with a form as a whole. */
 export interface FormFailure {
-  readonly title: string;
-  readonly detail: string;
+  readonly text: string;
   /** How the log names it, where the fault is the server's. */
   readonly trace: string;
   /** Problems of fields this form does not show. */
@@ -51,7 +50,8 @@ export class Submission {
     const { title, detail, fields, status, instance } = apiProblemOf(error).problem;
     const others = landOnFields(this.form, fields);
     const landed = fields.length > 0 && others.length === 0;
-    if (!landed) this.failureSignal.set({ title, detail, trace: status >= 500 ? instance : '', others });
+    if (!landed)
+      this.failureSignal.set({ text: detail || title, trace: status >= 500 ? instance : '', others });
     else this.focusFirstError();
   }
 

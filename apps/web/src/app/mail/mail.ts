@@ -1,11 +1,14 @@
 import { DatePipe } from '@angular/common';
 import { ChangeDetectionStrategy, Component, computed, inject, input } from '@angular/core';
 import { rxResource } from '@angular/core/rxjs-interop';
+import { MatButton } from '@angular/material/button';
 import { RouterLink } from '@angular/router';
 import type { CaughtMail } from '@tollgate/contracts';
 import { interval, map } from 'rxjs';
 import { ApiClient } from '../api/api-client';
 import { readAgain } from '../api/read-again';
+import { paths } from '../paths';
+import { SessionStore } from '../session/session-store';
 import { Page } from '../shell/page';
 import { Empty } from '../states/empty';
 import { Failure } from '../states/failure';
@@ -17,13 +20,16 @@ const lookEveryMs = 3000;
 /** The demonstration's mail box: everything the server has sent to anybody, since nothing leaves this machine. */
 @Component({
   selector: 'tg-mail',
-  imports: [DatePipe, Empty, Failure, Loading, MailText, Page, RouterLink],
+  imports: [DatePipe, Empty, Failure, Loading, MailText, MatButton, Page, RouterLink],
   changeDetection: ChangeDetectionStrategy.OnPush,
   templateUrl: './mail.html',
   styleUrl: './mail.scss',
 })
 export class Mail {
   private readonly api = inject(ApiClient);
+
+  protected readonly person = inject(SessionStore).person;
+  protected readonly paths = paths;
 
   /** Query parameter: the mail that is read; left out, the newest. */
   readonly read = input<string>();

@@ -9,7 +9,7 @@ import { apiProblemOf } from '../api/api-problem';
   changeDetection: ChangeDetectionStrategy.OnPush,
   host: { role: 'alert' },
   template: `
-    <h2>{{ problem().title }}</h2>
+    <h2>{{ heading() }}</h2>
     <p>{{ problem().detail }}</p>
     @if (problem().instance) {
       <p class="trace">Noted in the log as {{ problem().instance }}</p>
@@ -44,5 +44,8 @@ export class Failure {
   readonly retry = output<void>();
 
   protected readonly problem = computed(() => apiProblemOf(this.error()).problem);
+  protected readonly heading = computed(() =>
+    this.problem().status === 404 ? 'There is nothing here to see' : 'This could not be read',
+  );
   protected readonly mayRetry = computed(() => ![403, 404].includes(this.problem().status));
 }

@@ -25,6 +25,7 @@ import { Toasts } from './toasts';
       bottom: var(--tg-space-5);
       left: var(--tg-gutter);
       display: grid;
+      justify-items: start;
       gap: var(--tg-space-2);
       max-width: min(520px, calc(100vw - 2 * var(--tg-gutter)));
     }
