@@ -1,0 +1,1 @@
+export { apiDocsRoutes } from './api-docs.routes';

@@ -1,0 +1,60 @@
+import { existsSync } from 'node:fs';
+import { fileURLToPath } from 'node:url';
+import { Piscina } from 'piscina';
+import { errorFacts, log } from '../../platform/log';
+import { CheckQueue } from './check-queue';
+import type { CheckOutcome, CheckTask, TaskResult } from './check-task';
+import type { FieldProblem } from '@tollgate/contracts';
+
+/** The document is well formed and cannot be checked as it stands. */
+export class Uncheckable extends Error {
+  constructor(readonly problems: readonly FieldProblem[]) {
+    super('The channel cannot be checked as it stands.');
+  }
+}
+
+const mostRemembered = 64;
+
+/** The threads that check, and the latest outcomes by fingerprint. */
+export class CheckPool {
+  private readonly pool: Piscina<CheckTask, TaskResult>;
+  private readonly queue: CheckQueue;
+  private readonly remembered = new Map<string, CheckOutcome>();
+
+  constructor(threads: number) {
+    this.pool = new Piscina<CheckTask, TaskResult>({ ...workerFile(), minThreads: 1, maxThreads: threads, idleTimeout: 600_000 });
+    // A thread that dies outside a task is replaced by the pool; without a listener it would take the process along.
+    this.pool.on('error', (error: unknown) => log('error', 'check thread', errorFacts(error)));
+    this.queue = new CheckQueue(threads);
+  }
+
+  /** @throws Uncheckable with paths in the channel; HttpProblem superseded where a newer check took the place */
+  async run(person: string, key: string | undefined, task: CheckTask): Promise<CheckOutcome> {
+    const result = await this.queue.add(person, key, () => this.pool.run(task));
+    if (!result.ok) throw new Uncheckable(result.problems);
+    if (task.form === 'view') this.remember(result.outcome);
+    return result.outcome;
+  }
+
+  /** An outcome of before with the same inputs, which are then the same bytes. */
+  recall(fingerprint: string): CheckOutcome | undefined {
+    return this.remembered.get(fingerprint);
+  }
+
+  async stop(): Promise<void> {
+    await this.pool.destroy();
+  }
+
+  private remember(outcome: CheckOutcome): void {
+    this.remembered.delete(outcome.fingerprint);
+    this.remembered.set(outcome.fingerprint, outcome);
+    if (this.remembered.size > mostRemembered) this.remembered.delete(this.remembered.keys().next().value!);
+  }
+}
+
+/** Bundled, the worker lies beside main; from source it is run through tsx. */
+function workerFile(): { filename: string; execArgv?: string[] } {
+  const bundled = fileURLToPath(new URL('./check.worker.mjs', import.meta.url));
+  if (existsSync(bundled)) return { filename: bundled };
+  return { filename: fileURLToPath(new URL('./check.worker.ts', import.meta.url)), execArgv: ['--import', 'tsx'] };
+}

@@ -1,0 +1,38 @@
+import type { ChannelVerdict, CompleteChannel, FieldProblem, Standing } from '@tollgate/contracts';
+
+/** A part as a check names it: the key in the channel, and which file it is. */
+export interface TaskPart {
+  readonly key: string;
+  readonly sha256: string;
+  readonly name: string;
+}
+
+/** What is handed to a worker thread. */
+export interface CheckTask {
+  readonly channel: CompleteChannel;
+  readonly parts: readonly TaskPart[];
+  /** Data directory, where the parsed parts lie. */
+  readonly dataDirectory: string;
+  /** What is wanted: what the screen draws, or the whole response. */
+  readonly form: 'view' | 'response';
+}
+
+/** Columns that lists and filters need of a check. */
+export interface CheckSummary {
+  readonly verdict: ChannelVerdict;
+  readonly worstMarginDb: number | null;
+  readonly worstLimitTitle: string | null;
+  readonly worstLimitStatus: string | null;
+  readonly worstFrequencyHz: number | null;
+  readonly weakestStanding: Standing;
+}
+
+export interface CheckOutcome {
+  readonly fingerprint: string;
+  readonly engine: string;
+  readonly summary: CheckSummary;
+  /** The view or response, written as JSON in the worker, so that the serving thread only passes it on. */
+  readonly json: string;
+}
+
+export type TaskResult = { readonly ok: true; readonly outcome: CheckOutcome } | { readonly ok: false; readonly problems: readonly FieldProblem[] };

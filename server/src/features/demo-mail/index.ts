@@ -1,0 +1,1 @@
+export { demoMailRoutes } from './demo-mail.routes';

@@ -1,0 +1,1 @@
+export { eventsRoutes } from './events.routes';

@@ -1,0 +1,2 @@
+export { createMasksRepository, type MaskDocument, type MasksRepository } from './masks.repository';
+export { maskRoutes } from './masks.routes';

@@ -1,0 +1,3 @@
+export { createPassport } from './passport';
+export { sessionRoutes } from './session.routes';
+export { createThrottle, type Throttle } from './throttle';

@@ -1,0 +1,3 @@
+export * from './columns';
+export * from './connect';
+export * from './migrator';
