@@ -1,0 +1,41 @@
+import { evaluationHz, type CompleteChannel, type Warning } from '@tollgate/contracts';
+import type { BuiltElement } from '@tollgate/elements';
+import { commonBand, spokenHz, type Coverage } from '@tollgate/masks';
+
+/** What a person should know of a channel that was checked, beside its grid. */
+export function cautionsOf(
+  channel: CompleteChannel,
+  sections: readonly BuiltElement[],
+  coverage: readonly Coverage[],
+): Warning[] {
+  return [...ofParts(sections), ...ofStackup(channel), ...ofEvaluation(channel, coverage)];
+}
+
+function ofParts(sections: readonly BuiltElement[]): Warning[] {
+  return sections.flatMap(({ warnings }, i) =>
+    warnings.map((message) => ({ path: `elements[${i}]`, message })),
+  );
+}
+
+function ofStackup({ stackup, elements }: CompleteChannel): Warning[] {
+  const used = new Set(elements.flatMap((element) => (element.kind === 'trace' ? element.layer : [])));
+  if (!stackup || used.size === 0) return [];
+  const found: Warning[] = (stackup.layers ?? []).flatMap((layer, i) => {
+    if (layer.kind !== 'copper' || !used.has(layer.name) || layer.roughness !== undefined) return [];
+    const message = `Smooth copper assumed on ${layer.name}: real foil is rougher and loses more.`;
+    return [{ path: `stackup.layers[${i}].roughness`, message }];
+  });
+  if (stackup.temperatureC === undefined) {
+    found.push({ path: 'stackup.temperatureC', message: 'No temperature is given: 20 °C assumed.' });
+  }
+  return found;
+}
+
+function ofEvaluation(channel: CompleteChannel, coverage: readonly Coverage[]): Warning[] {
+  const atHz = evaluationHz(channel);
+  const band = commonBand(coverage);
+  if (atHz === undefined || !band || (atHz >= band[0] && atHz <= band[1])) return [];
+  const path = channel.evaluationHz === undefined ? '' : 'evaluationHz';
+  const message = `The parts answer from ${spokenHz(band[0])} to ${spokenHz(band[1])} only: there is no ledger at ${spokenHz(atHz)}.`;
+  return [{ path, message }];
+}

@@ -1,0 +1,170 @@
+import type { ChannelElement, CompleteChannel } from '@tollgate/contracts';
+import {
+  buildElement,
+  elementCoverage,
+  elementTollDb,
+  type BuildContext,
+  type BuiltElement,
+} from '@tollgate/elements';
+import type { Coverage } from '@tollgate/masks';
+import {
+  cascadeAll,
+  renormalize,
+  sameReference,
+  tollDb,
+  toMixedModeInto,
+  uniformReference,
+  type Network,
+} from '@tollgate/network';
+import canonicalize from 'canonicalize';
+import type { CheckCache } from './cache';
+import type { Part } from './check.types';
+import { ofElement } from './problem';
+import { jointOhmOf, portsOf, referencesOf } from './references';
+
+/** Kinds that stand once in each leg of a pair, alike and without coupling. */
+const legKinds: readonly string[] = [
+  ...['line', 'rlgc-line', 'series', 'shunt', 'stub', 'tee', 'pi', 'transformer', 'attenuator', 'capacitor'],
+];
+
+/**
+ * A channel's elements in a row, ready to be evaluated. Where every element of a pair is two equal uncoupled legs, one
+ * leg alone is built and cascaded (2 ports): its S is SDD and SCC, and the pair's four ports follow from it.
+ */
+export interface Chain {
+  readonly channel: CompleteChannel;
+  readonly context: BuildContext;
+  /** Ports of the channel, and of the sections that are cascaded. */
+  readonly ports: 2 | 4;
+  readonly sectionPorts: 2 | 4;
+  /** References of the channel, and of the sections' cascade, a pair a port. */
+  readonly reference: Float64Array;
+  readonly sectionReference: Float64Array;
+  readonly coverage: readonly Coverage[];
+  readonly cache?: CheckCache;
+}
+
+/** @throws CheckRefused where a part contradicts its element */
+export function createChain(
+  channel: CompleteChannel,
+  parts: ReadonlyMap<string, Part>,
+  cache?: CheckCache,
+): Chain {
+  const reference = referencesOf(channel);
+  const ports = portsOf(channel);
+  const oneLeg = ports === 4 && channel.elements.every(({ kind }) => legKinds.includes(kind));
+  const sectionReference = oneLeg
+    ? Float64Array.of(...reference.subarray(0, 2), ...reference.subarray(4, 6))
+    : reference;
+  const signaling = oneLeg ? 'single-ended' : channel.signaling;
+  const jointOhm = jointOhmOf(reference);
+  const context: BuildContext = { signaling, jointOhm, stackup: channel.stackup, parts };
+  const coverage = channel.elements.flatMap((element, i) =>
+    ofElement(i, () => elementCoverage(element, context)),
+  );
+  const sectionPorts = oneLeg ? 2 : ports;
+  return { channel, context, ports, sectionPorts, reference, sectionReference, coverage, cache };
+}
+
+/** Every element on these frequencies (ascending, inside the coverage), from the cache where `cached` asks for it. */
+export function buildSections(chain: Chain, frequenciesHz: Float64Array, cached: boolean): BuiltElement[] {
+  const { channel, context, cache } = chain;
+  const build = (element: ChannelElement, i: number): BuiltElement =>
+    ofElement(i, () => buildElement(element, frequenciesHz, context));
+  if (!cache || !cached) return channel.elements.map(build);
+  const shared = `${cache.gridKey(frequenciesHz)} ${context.jointOhm} ${context.signaling}`;
+  const stackup = canonicalize(channel.stackup ?? null) ?? '';
+  return channel.elements.map((element, i) => {
+    const key = `${shared} ${keyOf(element, context, stackup)}`;
+    const known = cache.get(key);
+    if (known) return known;
+    const built = build(element, i);
+    cache.set(key, built);
+    return built;
+  });
+}
+
+/** What an element's S depends on; how it is named, trusted or placed does not enter. */
+function keyOf(element: ChannelElement, { parts }: BuildContext, stackup: string): string {
+  const { id: _id, label: _label, notes: _notes, plan: _plan, source: _source, ...rest } = element;
+  const { allotmentDb: _allotment, standing: _standing, ...model } = rest;
+  const part =
+    'file' in element || 'fileId' in element
+      ? (parts.get(element.file ?? element.fileId ?? '')?.sha256 ?? '')
+      : '';
+  const onStackup = element.kind === 'trace' || element.kind === 'via';
+  return `${canonicalize(model)} ${part} ${onStackup ? stackup : ''}`;
+}
+
+/** The sections in a row, at the channel's references and with the channel's ports. */
+export function cascadeSections(
+  chain: Chain,
+  sections: readonly Float64Array[],
+  frequenciesHz: Float64Array,
+): Network {
+  const s = cascadeAll(sections, chain.sectionPorts, frequenciesHz.length);
+  const network = atReference(chain, s, frequenciesHz, chain.sectionReference);
+  return chain.ports === chain.sectionPorts ? network : bothLegs(network, chain.reference);
+}
+
+/** A cascade of sections, renormalised once from the joint to `reference`. */
+export function atReference(
+  chain: Chain,
+  s: Float64Array,
+  frequenciesHz: Float64Array,
+  reference: Float64Array,
+): Network {
+  const referenceOhm = uniformReference(chain.sectionPorts, chain.context.jointOhm);
+  const network = { ports: chain.sectionPorts, frequenciesHz, s, referenceOhm };
+  return sameReference(referenceOhm, reference) ? network : renormalize(network, reference);
+}
+
+/** Two equal legs without coupling: ports 1, 3 are the p leg and 2, 4 the n leg. */
+function bothLegs(leg: Network, referenceOhm: Float64Array): Network {
+  const points = leg.frequenciesHz.length;
+  const s = new Float64Array(points * 32);
+  for (let point = 0; point < points; point++) {
+    for (let entry = 0; entry < 4; entry++) {
+      const from = point * 8 + entry * 2;
+      const p = point * 32 + (entry >> 1) * 16 + (entry & 1) * 4;
+      s[p] = s[p + 10] = leg.s[from]!;
+      s[p + 1] = s[p + 11] = leg.s[from + 1]!;
+    }
+  }
+  return { ports: 4, frequenciesHz: leg.frequenciesHz, s, referenceOhm };
+}
+
+/** The channel at a few frequencies that its limits or ledgers ask for. */
+export function evaluateChain(chain: Chain, frequenciesHz: Float64Array, cached: boolean): Network {
+  const sections = buildSections(chain, frequenciesHz, cached).map(({ s }) => s);
+  return cascadeSections(chain, sections, frequenciesHz);
+}
+
+/**
+ * Toll of element `index` at the frequencies its section was built on, dB, at least 0: exact where the kind has it, else
+ * -10 log10 of the maximum available gain, of SDD for a pair.
+ */
+export function tollOfSection(
+  chain: Chain,
+  index: number,
+  section: Float64Array,
+  frequenciesHz: Float64Array,
+): Float64Array {
+  const element = chain.channel.elements[index]!;
+  const exact = ofElement(index, () => elementTollDb(element, frequenciesHz, chain.context));
+  if (exact) return exact;
+  const points = frequenciesHz.length;
+  const twoPort = chain.sectionPorts === 2 ? section : differentialOf(section, points);
+  return tollDb(twoPort, points).map((toll) => Math.max(0, toll));
+}
+
+function differentialOf(s: Float64Array, points: number): Float64Array {
+  const mixed = new Float64Array(s.length);
+  toMixedModeInto(mixed, s, points);
+  const out = new Float64Array(points * 8);
+  for (let point = 0; point < points; point++) {
+    out.set(mixed.subarray(point * 32, point * 32 + 4), point * 8);
+    out.set(mixed.subarray(point * 32 + 8, point * 32 + 12), point * 8 + 4);
+  }
+  return out;
+}
