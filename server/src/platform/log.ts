@@ -1,5 +1,9 @@
 /** One JSON line an entry on standard error; passwords, tokens and bodies are never given to it. */
-export function log(level: 'info' | 'warning' | 'error', message: string, facts: Record<string, unknown> = {}): void {
+export function log(
+  level: 'info' | 'warning' | 'error',
+  message: string,
+  facts: Record<string, unknown> = {},
+): void {
   process.stderr.write(`${JSON.stringify({ level, message, ...facts })}\n`);
 }
 

@@ -1,11 +1,25 @@
-import { roleAllows, type Board, type BoardSummary, type Link, type Member, type Revision, type RevisionSummary, type Role } from '@tollgate/contracts';
+import {
+  roleAllows,
+  type Board,
+  type BoardSummary,
+  type Link,
+  type Member,
+  type Revision,
+  type RevisionSummary,
+  type Role,
+} from '@tollgate/contracts';
 import type { BoardRow, LinkRow, RevisionRow } from './boards.model';
 import type { RevisionTally, WorstChannel } from './boards.repository';
 
 const none = { channels: 0, holds: 0, exceeds: 0, notJudged: 0, notChecked: 0 };
 
-export function presentRevisionSummary(row: RevisionRow, tallies: readonly RevisionTally[], worsts: readonly WorstChannel[]): RevisionSummary {
-  const { channels, holds, exceeds, notJudged, notChecked } = tallies.find((each) => each.revisionId === row.id) ?? none;
+export function presentRevisionSummary(
+  row: RevisionRow,
+  tallies: readonly RevisionTally[],
+  worsts: readonly WorstChannel[],
+): RevisionSummary {
+  const { channels, holds, exceeds, notJudged, notChecked } =
+    tallies.find((each) => each.revisionId === row.id) ?? none;
   const worst = worsts.find((each) => each.revisionId === row.id);
   return {
     id: row.id,
@@ -14,7 +28,14 @@ export function presentRevisionSummary(row: RevisionRow, tallies: readonly Revis
     archived: row.archived,
     channels,
     counts: { holds, exceeds, notJudged, notChecked },
-    worst: worst ? { marginDb: worst.marginDb, limitTitle: worst.limitTitle, channelId: worst.channelId, channelName: worst.channelName } : null,
+    worst: worst
+      ? {
+          marginDb: worst.marginDb,
+          limitTitle: worst.limitTitle,
+          channelId: worst.channelId,
+          channelName: worst.channelName,
+        }
+      : null,
   };
 }
 
@@ -22,7 +43,12 @@ export function presentBoardSummary(row: BoardRow, latest: RevisionSummary | nul
   return { id: row.id, name: row.name, description: row.description, archived: row.archived, latest };
 }
 
-export function presentBoard(row: BoardRow, revisions: RevisionSummary[], members: Member[], roles: readonly Role[]): Board {
+export function presentBoard(
+  row: BoardRow,
+  revisions: RevisionSummary[],
+  members: Member[],
+  roles: readonly Role[],
+): Board {
   return {
     id: row.id,
     name: row.name,
@@ -42,7 +68,13 @@ export function presentLink({ id, name, archived }: LinkRow): Link {
   return { id, name, archived };
 }
 
-export function presentRevision(row: RevisionRow, board: BoardRow, links: readonly LinkRow[], siblings: readonly RevisionRow[], roles: readonly Role[]): Revision {
+export function presentRevision(
+  row: RevisionRow,
+  board: BoardRow,
+  links: readonly LinkRow[],
+  siblings: readonly RevisionRow[],
+  roles: readonly Role[],
+): Revision {
   const open = !row.archived && !board.archived;
   return {
     id: row.id,

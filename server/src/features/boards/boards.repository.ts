@@ -27,18 +27,29 @@ export function createBoardsRepository(sequelize: Sequelize) {
   const { boards, members, revisions, links } = defineBoards(sequelize);
 
   async function boardOf(sql: string, id: string): Promise<string | null> {
-    const [row] = await sequelize.query<{ boardId: string }>(sql, { replacements: { id }, type: QueryTypes.SELECT });
+    const [row] = await sequelize.query<{ boardId: string }>(sql, {
+      replacements: { id },
+      type: QueryTypes.SELECT,
+    });
     return row?.boardId ?? null;
   }
 
   return {
-    isMember: async (personId: string, boardId: string) => (await members.count({ where: { personId, boardId } })) > 0,
+    isMember: async (personId: string, boardId: string) =>
+      (await members.count({ where: { personId, boardId } })) > 0,
     boardOfRevision: (id: string) => boardOf('SELECT board_id AS boardId FROM revisions WHERE id = :id', id),
-    boardOfLink: (id: string) => boardOf('SELECT r.board_id AS boardId FROM links l JOIN revisions r ON r.id = l.revision_id WHERE l.id = :id', id),
+    boardOfLink: (id: string) =>
+      boardOf(
+        'SELECT r.board_id AS boardId FROM links l JOIN revisions r ON r.id = l.revision_id WHERE l.id = :id',
+        id,
+      ),
 
     async boardsOf(personId: string): Promise<BoardRow[]> {
       const mine = await members.findAll({ where: { personId } });
-      const rows = await boards.findAll({ where: { id: mine.map((row) => row.get().boardId) }, order: [['name', 'ASC']] });
+      const rows = await boards.findAll({
+        where: { id: mine.map((row) => row.get().boardId) },
+        order: [['name', 'ASC']],
+      });
       return rows.map((row) => plainBoard(row.get()));
     },
 
@@ -48,7 +59,12 @@ export function createBoardsRepository(sequelize: Sequelize) {
     },
 
     async members(boardId: string): Promise<Member[]> {
-      const rows = await sequelize.query<{ personId: string; name: string; since: Date; roles: string | null }>(
+      const rows = await sequelize.query<{
+        personId: string;
+        name: string;
+        since: Date;
+        roles: string | null;
+      }>(
         `SELECT m.person_id AS personId, p.name, m.since, GROUP_CONCAT(r.role ORDER BY r.role) AS roles
          FROM board_members m JOIN people p ON p.id = m.person_id LEFT JOIN person_roles r ON r.person_id = p.id
          WHERE m.board_id = :boardId GROUP BY m.person_id, p.name, m.since ORDER BY p.name`,
@@ -63,7 +79,14 @@ export function createBoardsRepository(sequelize: Sequelize) {
     },
 
     async revisionsOf(boardIds: readonly string[], transaction?: Transaction): Promise<RevisionRow[]> {
-      const rows = await revisions.findAll({ where: { boardId: [...boardIds] }, order: [['createdAt', 'ASC'], ['letter', 'ASC']], transaction });
+      const rows = await revisions.findAll({
+        where: { boardId: [...boardIds] },
+        order: [
+          ['createdAt', 'ASC'],
+          ['letter', 'ASC'],
+        ],
+        transaction,
+      });
       return rows.map((row) => ({ ...row.get(), archived: Boolean(row.get().archived) }));
     },
 
@@ -114,14 +137,22 @@ export function createBoardsRepository(sequelize: Sequelize) {
     },
 
     insertBoard: (work: Work, row: BoardRow) => boards.create(row, { transaction: work.transaction }),
-    updateBoard: (work: Work, id: string, change: Partial<BoardRow>) => boards.update(change, { where: { id }, transaction: work.transaction }),
+    updateBoard: (work: Work, id: string, change: Partial<BoardRow>) =>
+      boards.update(change, { where: { id }, transaction: work.transaction }),
     addMember: (work: Work, boardId: string, personId: string) =>
-      members.bulkCreate([{ boardId, personId, since: work.at }], { ignoreDuplicates: true, transaction: work.transaction }),
-    removeMember: (work: Work, boardId: string, personId: string) => members.destroy({ where: { boardId, personId }, transaction: work.transaction }),
-    insertRevision: (work: Work, row: RevisionRow) => revisions.create(row, { transaction: work.transaction }),
-    updateRevision: (work: Work, id: string, change: Partial<RevisionRow>) => revisions.update(change, { where: { id }, transaction: work.transaction }),
+      members.bulkCreate([{ boardId, personId, since: work.at }], {
+        ignoreDuplicates: true,
+        transaction: work.transaction,
+      }),
+    removeMember: (work: Work, boardId: string, personId: string) =>
+      members.destroy({ where: { boardId, personId }, transaction: work.transaction }),
+    insertRevision: (work: Work, row: RevisionRow) =>
+      revisions.create(row, { transaction: work.transaction }),
+    updateRevision: (work: Work, id: string, change: Partial<RevisionRow>) =>
+      revisions.update(change, { where: { id }, transaction: work.transaction }),
     insertLink: (work: Work, row: LinkRow) => links.create(row, { transaction: work.transaction }),
-    updateLink: (work: Work, id: string, change: Partial<LinkRow>) => links.update(change, { where: { id }, transaction: work.transaction }),
+    updateLink: (work: Work, id: string, change: Partial<LinkRow>) =>
+      links.update(change, { where: { id }, transaction: work.transaction }),
   };
 }
 

@@ -108,7 +108,8 @@ export function revisionRoutes(boards: BoardsService, repository: BoardsReposito
       board: ofRevision,
       body: api.revisionChange,
       reply: api.revision,
-      handle: ({ caller, params, boardId, body }) => boards.changeRevision(caller, params.revisionId, boardId, body),
+      handle: ({ caller, params, boardId, body }) =>
+        boards.changeRevision(caller, params.revisionId, boardId, body),
     }),
     route({
       method: 'post',
@@ -120,7 +121,8 @@ export function revisionRoutes(boards: BoardsService, repository: BoardsReposito
       body: api.linkCreate,
       reply: api.link,
       status: 201,
-      handle: ({ caller, params, boardId, body }) => boards.createLink(caller, params.revisionId, boardId, body.name),
+      handle: ({ caller, params, boardId, body }) =>
+        boards.createLink(caller, params.revisionId, boardId, body.name),
     }),
     route({
       method: 'patch',

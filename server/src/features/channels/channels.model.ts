@@ -44,7 +44,11 @@ export interface WindowRow {
   baseDocument: string;
 }
 
-export function defineChannels(sequelize: Sequelize): { channels: Table<ChannelRow>; uses: Table<UseRow>; windows: Table<WindowRow> } {
+export function defineChannels(sequelize: Sequelize): {
+  channels: Table<ChannelRow>;
+  uses: Table<UseRow>;
+  windows: Table<WindowRow>;
+} {
   return {
     channels: sequelize.define('channels', {
       id: column.id,

@@ -1,4 +1,12 @@
-import { roleAllows, type Channel, type ChannelSummary, type CheckView, type CompleteChannel, type FieldProblem, type Role } from '@tollgate/contracts';
+import {
+  roleAllows,
+  type Channel,
+  type ChannelSummary,
+  type CheckView,
+  type CompleteChannel,
+  type FieldProblem,
+  type Role,
+} from '@tollgate/contracts';
 import type { PlacedChannel } from './channels.repository';
 
 export function presentChannelSummary(row: PlacedChannel): ChannelSummary {
@@ -21,7 +29,11 @@ export function presentChannelSummary(row: PlacedChannel): ChannelSummary {
   };
 }
 
-export function presentChannel(row: PlacedChannel, viewJson: string | undefined, roles: readonly Role[]): Channel {
+export function presentChannel(
+  row: PlacedChannel,
+  viewJson: string | undefined,
+  roles: readonly Role[],
+): Channel {
   const changeable = row.open && !row.archived;
   return {
     ...presentChannelSummary(row),

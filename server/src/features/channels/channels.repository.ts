@@ -23,13 +23,26 @@ const placedTables = `channels c JOIN revisions r ON r.id = c.revision_id JOIN b
 export function createChannelsRepository(sequelize: Sequelize) {
   const { channels, uses, windows } = defineChannels(sequelize);
 
-  async function placed(select: string, where: string, replacements: Record<string, unknown>, transaction?: Transaction): Promise<PlacedChannel[]> {
-    const rows = await sequelize.query<PlacedChannel>(`SELECT ${select} FROM ${placedTables} WHERE ${where} ORDER BY c.name`, {
-      replacements,
-      type: QueryTypes.SELECT,
-      transaction,
-    });
-    return rows.map((row) => ({ ...row, outOfDate: Boolean(row.outOfDate), archived: Boolean(row.archived), open: Boolean(row.open) }));
+  async function placed(
+    select: string,
+    where: string,
+    replacements: Record<string, unknown>,
+    transaction?: Transaction,
+  ): Promise<PlacedChannel[]> {
+    const rows = await sequelize.query<PlacedChannel>(
+      `SELECT ${select} FROM ${placedTables} WHERE ${where} ORDER BY c.name`,
+      {
+        replacements,
+        type: QueryTypes.SELECT,
+        transaction,
+      },
+    );
+    return rows.map((row) => ({
+      ...row,
+      outOfDate: Boolean(row.outOfDate),
+      archived: Boolean(row.archived),
+      open: Boolean(row.open),
+    }));
   }
 
   return {
@@ -41,8 +54,20 @@ export function createChannelsRepository(sequelize: Sequelize) {
       return row?.boardId ?? null;
     },
 
+    async isLinkOf(linkId: string, revisionId: string): Promise<boolean> {
+      const rows = await sequelize.query(
+        'SELECT 1 FROM links WHERE id = :linkId AND revision_id = :revisionId',
+        {
+          replacements: { linkId, revisionId },
+          type: QueryTypes.SELECT,
+        },
+      );
+      return rows.length > 0;
+    },
+
     /** Without the documents. */
-    ofRevision: (revisionId: string) => placed(`${placedColumns}, '' AS document`, 'c.revision_id = :revisionId', { revisionId }),
+    ofRevision: (revisionId: string) =>
+      placed(`${placedColumns}, '' AS document`, 'c.revision_id = :revisionId', { revisionId }),
 
     async one(id: string, transaction?: Transaction): Promise<PlacedChannel | undefined> {
       return (await placed(`${placedColumns}, c.document`, 'c.id = :id', { id }, transaction))[0];
@@ -50,7 +75,10 @@ export function createChannelsRepository(sequelize: Sequelize) {
 
     /** The row as it is now, kept from others until the unit of work ends. */
     async locked(work: Work, id: string): Promise<ChannelRow> {
-      const row = await channels.findByPk(id, { transaction: work.transaction, lock: work.transaction.LOCK.UPDATE });
+      const row = await channels.findByPk(id, {
+        transaction: work.transaction,
+        lock: work.transaction.LOCK.UPDATE,
+      });
       return row!.get();
     },
 
@@ -65,23 +93,41 @@ export function createChannelsRepository(sequelize: Sequelize) {
     },
 
     insert: (work: Work, row: ChannelRow) => channels.create(row, { transaction: work.transaction }),
-    update: (work: Work, id: string, change: Partial<ChannelRow>) => channels.update(change, { where: { id }, transaction: work.transaction }),
+    update: (work: Work, id: string, change: Partial<ChannelRow>) =>
+      channels.update(change, { where: { id }, transaction: work.transaction }),
 
     async setUses(work: Work, channelId: string, used: readonly Omit<UseRow, 'channelId'>[]): Promise<void> {
       await uses.destroy({ where: { channelId }, transaction: work.transaction });
-      await uses.bulkCreate(used.map((use) => ({ channelId, ...use })), { transaction: work.transaction, ignoreDuplicates: true });
+      await uses.bulkCreate(
+        used.map((use) => ({ channelId, ...use })),
+        { transaction: work.transaction, ignoreDuplicates: true },
+      );
+    },
+
+    async copyUses(work: Work, from: string, to: string): Promise<void> {
+      const rows = await uses.findAll({ where: { channelId: from }, transaction: work.transaction });
+      await uses.bulkCreate(
+        rows.map((row) => ({ ...row.get(), channelId: to })),
+        { transaction: work.transaction },
+      );
     },
 
     async window(work: Work, channelId: string, personId: string): Promise<WindowRow | undefined> {
-      return (await windows.findOne({ where: { channelId, personId }, transaction: work.transaction }))?.get();
+      return (
+        await windows.findOne({ where: { channelId, personId }, transaction: work.transaction })
+      )?.get();
     },
 
     async otherWindows(work: Work, channelId: string, personId: string): Promise<WindowRow[]> {
-      const rows = await windows.findAll({ where: { channelId, personId: { [Op.ne]: personId } }, transaction: work.transaction });
+      const rows = await windows.findAll({
+        where: { channelId, personId: { [Op.ne]: personId } },
+        transaction: work.transaction,
+      });
       return rows.map((row) => row.get());
     },
 
     openWindow: (work: Work, row: WindowRow) => windows.create(row, { transaction: work.transaction }),
-    closeWindow: (work: Work, { channelId, personId }: WindowRow) => windows.destroy({ where: { channelId, personId }, transaction: work.transaction }),
+    closeWindow: (work: Work, { channelId, personId }: WindowRow) =>
+      windows.destroy({ where: { channelId, personId }, transaction: work.transaction }),
   };
 }

@@ -20,7 +20,12 @@ export interface DraftEvents {
  * the person left. The document before is kept beside the channel until then.
  */
 export function createDraftEvents(repository: ChannelsRepository, unitOfWork: UnitOfWork): DraftEvents {
-  async function turnIntoEvent(work: Work, window: WindowRow, now: ChannelRow, boardId: string): Promise<void> {
+  async function turnIntoEvent(
+    work: Work,
+    window: WindowRow,
+    now: ChannelRow,
+    boardId: string,
+  ): Promise<void> {
     const patch = compare(JSON.parse(window.baseDocument) as object, JSON.parse(now.document) as object);
     await repository.closeWindow(work, window);
     work.event({
@@ -36,9 +41,16 @@ export function createDraftEvents(repository: ChannelsRepository, unitOfWork: Un
   return {
     async saved(work, before, boardId) {
       const personId = work.actor.personId!;
-      for (const other of await repository.otherWindows(work, before.id, personId)) await turnIntoEvent(work, other, before, boardId);
+      for (const other of await repository.otherWindows(work, before.id, personId))
+        await turnIntoEvent(work, other, before, boardId);
       if (await repository.window(work, before.id, personId)) return;
-      await repository.openWindow(work, { channelId: before.id, personId, openedAt: work.at, baseVersion: before.version, baseDocument: before.document });
+      await repository.openWindow(work, {
+        channelId: before.id,
+        personId,
+        openedAt: work.at,
+        baseVersion: before.version,
+        baseDocument: before.document,
+      });
       work.job({
         kind: closeDraftJob,
         payload: { channelId: before.id, personId },

@@ -22,7 +22,12 @@ export class CheckPool {
   private readonly remembered = new Map<string, CheckOutcome>();
 
   constructor(threads: number) {
-    this.pool = new Piscina<CheckTask, TaskResult>({ ...workerFile(), minThreads: 1, maxThreads: threads, idleTimeout: 600_000 });
+    this.pool = new Piscina<CheckTask, TaskResult>({
+      ...workerFile(),
+      minThreads: 1,
+      maxThreads: threads,
+      idleTimeout: 600_000,
+    });
     // A thread that dies outside a task is replaced by the pool; without a listener it would take the process along.
     this.pool.on('error', (error: unknown) => log('error', 'check thread', errorFacts(error)));
     this.queue = new CheckQueue(threads);
@@ -56,5 +61,8 @@ export class CheckPool {
 function workerFile(): { filename: string; execArgv?: string[] } {
   const bundled = fileURLToPath(new URL('./check.worker.mjs', import.meta.url));
   if (existsSync(bundled)) return { filename: bundled };
-  return { filename: fileURLToPath(new URL('./check.worker.ts', import.meta.url)), execArgv: ['--import', 'tsx'] };
+  return {
+    filename: fileURLToPath(new URL('./check.worker.ts', import.meta.url)),
+    execArgv: ['--import', 'tsx'],
+  };
 }

@@ -28,7 +28,10 @@ export class CheckQueue {
       this.waiting.push({
         key,
         person,
-        run: () => void work().then(resolve, reject).finally(() => this.finished(person)),
+        run: () =>
+          void work()
+            .then(resolve, reject)
+            .finally(() => this.finished(person)),
         drop: reject,
       });
       this.next();
@@ -42,7 +45,9 @@ export class CheckQueue {
 
   private next(): void {
     while (this.active < this.width) {
-      const at = this.waiting.findIndex((entry) => (this.running.get(entry.person) ?? 0) < this.mostPerPerson);
+      const at = this.waiting.findIndex(
+        (entry) => (this.running.get(entry.person) ?? 0) < this.mostPerPerson,
+      );
       if (at < 0) return;
       const [entry] = this.waiting.splice(at, 1);
       this.active += 1;

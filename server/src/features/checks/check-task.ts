@@ -35,4 +35,6 @@ export interface CheckOutcome {
   readonly json: string;
 }
 
-export type TaskResult = { readonly ok: true; readonly outcome: CheckOutcome } | { readonly ok: false; readonly problems: readonly FieldProblem[] };
+export type TaskResult =
+  | { readonly ok: true; readonly outcome: CheckOutcome }
+  | { readonly ok: false; readonly problems: readonly FieldProblem[] };

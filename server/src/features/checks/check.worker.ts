@@ -1,5 +1,13 @@
 import { createHash } from 'node:crypto';
-import { canonicalBytes, checkChannel, createCheckCache, engineVersion, toResponse, toView, type Part } from '@tollgate/budget';
+import {
+  canonicalBytes,
+  checkChannel,
+  createCheckCache,
+  engineVersion,
+  toResponse,
+  toView,
+  type Part,
+} from '@tollgate/budget';
 import type { CheckView } from '@tollgate/contracts';
 import { FileStore } from '../../platform/files';
 import { readParsed } from '../files/part-store';

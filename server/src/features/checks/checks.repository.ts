@@ -40,10 +40,19 @@ export function createChecksRepository(sequelize: Sequelize) {
   return {
     /** The same inputs give the same bytes: a check that is there is not written again. */
     async keep(work: Work, outcome: CheckOutcome): Promise<void> {
-      if (await checks.count({ where: { fingerprint: outcome.fingerprint }, transaction: work.transaction })) return;
+      if (await checks.count({ where: { fingerprint: outcome.fingerprint }, transaction: work.transaction }))
+        return;
       const view = await pack(Buffer.from(outcome.json, 'utf8'));
       await checks.bulkCreate(
-        [{ fingerprint: outcome.fingerprint, engine: outcome.engine, ...outcome.summary, view, createdAt: work.at }],
+        [
+          {
+            fingerprint: outcome.fingerprint,
+            engine: outcome.engine,
+            ...outcome.summary,
+            view,
+            createdAt: work.at,
+          },
+        ],
         { ignoreDuplicates: true, transaction: work.transaction },
       );
     },

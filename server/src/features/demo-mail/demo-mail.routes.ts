@@ -20,7 +20,11 @@ export function demoMailRoutes(config: Config): Route[] {
       if (error.code === 'ENOENT') return [];
       throw error;
     });
-    return found.filter((name) => name.endsWith('.json')).sort().reverse().slice(0, mostShown);
+    return found
+      .filter((name) => name.endsWith('.json'))
+      .sort()
+      .reverse()
+      .slice(0, mostShown);
   }
 
   return [
@@ -37,7 +41,9 @@ export function demoMailRoutes(config: Config): Route[] {
       path: '/demo/mail/:mailId',
       action: 'demo-mail.read',
       summary: 'One caught mail',
-      params: z.strictObject({ mailId: z.string().regex(/^[A-Za-z0-9-]{1,80}$/, 'Not a mail of the catcher.') }),
+      params: z.strictObject({
+        mailId: z.string().regex(/^[A-Za-z0-9-]{1,80}$/, 'Not a mail of the catcher.'),
+      }),
       reply: api.caughtMail,
       handle: async ({ params }) => {
         const all = await Promise.all((await names()).map(read));

@@ -21,7 +21,10 @@ export interface BoardFileRow {
   addedAt: Date;
 }
 
-export function defineFiles(sequelize: Sequelize): { files: Table<FileRow>; boardFiles: Table<BoardFileRow> } {
+export function defineFiles(sequelize: Sequelize): {
+  files: Table<FileRow>;
+  boardFiles: Table<BoardFileRow>;
+} {
   return {
     files: sequelize.define('files', {
       sha256: { ...column.hash, primaryKey: true },

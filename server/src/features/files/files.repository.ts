@@ -12,7 +12,11 @@ export type FilesRepository = ReturnType<typeof createFilesRepository>;
 export function createFilesRepository(sequelize: Sequelize) {
   const { files, boardFiles } = defineFiles(sequelize);
 
-  async function list(where: string, replacements: Record<string, unknown>, transaction?: Transaction): Promise<ListedFile[]> {
+  async function list(
+    where: string,
+    replacements: Record<string, unknown>,
+    transaction?: Transaction,
+  ): Promise<ListedFile[]> {
     const rows = await sequelize.query<ListedFile>(
       `SELECT b.id, b.board_id AS boardId, b.sha256, b.name, b.summary, b.added_by AS addedBy, b.added_at AS addedAt,
          f.size_bytes AS sizeBytes, p.name AS addedByName
@@ -32,11 +36,19 @@ export function createFilesRepository(sequelize: Sequelize) {
 
     /** Those of the named files that are this board's. */
     async some(boardId: string, ids: readonly string[]): Promise<ListedFile[]> {
-      return ids.length === 0 ? [] : list('b.board_id = :boardId AND b.id IN (:ids)', { boardId, ids: [...ids] });
+      return ids.length === 0
+        ? []
+        : list('b.board_id = :boardId AND b.id IN (:ids)', { boardId, ids: [...ids] });
     },
 
     async twin(work: Work, boardId: string, sha256: string, name: string): Promise<ListedFile | undefined> {
-      return (await list('b.board_id = :boardId AND b.sha256 = :sha256 AND b.name = :name', { boardId, sha256, name }, work.transaction))[0];
+      return (
+        await list(
+          'b.board_id = :boardId AND b.sha256 = :sha256 AND b.name = :name',
+          { boardId, sha256, name },
+          work.transaction,
+        )
+      )[0];
     },
 
     async insert(work: Work, file: FileRow, entry: BoardFileRow): Promise<void> {
@@ -44,6 +56,7 @@ export function createFilesRepository(sequelize: Sequelize) {
       await boardFiles.create(entry, { transaction: work.transaction });
     },
 
-    hashesOf: async (): Promise<string[]> => (await files.findAll({ attributes: ['sha256'] })).map((row) => row.get().sha256),
+    hashesOf: async (): Promise<string[]> =>
+      (await files.findAll({ attributes: ['sha256'] })).map((row) => row.get().sha256),
   };
 }

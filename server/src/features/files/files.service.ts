@@ -53,9 +53,23 @@ export function createFilesService({ repository, store, unitOfWork }: Needs) {
     await repository.insert(
       work,
       { sha256, sizeBytes, mediaType: 'text/plain', state: 'kept', createdAt: work.at },
-      { id, boardId, sha256, name: part.name, summary: JSON.stringify(summarise(part.file)), addedBy: work.actor.personId, addedAt: work.at },
+      {
+        id,
+        boardId,
+        sha256,
+        name: part.name,
+        summary: JSON.stringify(summarise(part.file)),
+        addedBy: work.actor.personId,
+        addedAt: work.at,
+      },
     );
-    work.event({ what: 'file.added', subject: id, boardId, to: { name: part.name, sha256 }, detail: `${part.name} added` });
+    work.event({
+      what: 'file.added',
+      subject: id,
+      boardId,
+      to: { name: part.name, sha256 },
+      detail: `${part.name} added`,
+    });
     work.change({ what: 'file.added', boardId });
     return id;
   }
@@ -73,14 +87,21 @@ export function createFilesService({ repository, store, unitOfWork }: Needs) {
     some: (boardId: string, ids: readonly string[]) => repository.some(boardId, ids),
     list: async (boardId: string) => (await repository.ofBoard(boardId)).map(presentFile),
 
-    async upload(caller: Caller, boardId: string, name: string, request: IncomingMessage): Promise<BoardFile> {
+    async upload(
+      caller: Caller,
+      boardId: string,
+      name: string,
+      request: IncomingMessage,
+    ): Promise<BoardFile> {
       checkName(name);
       refuseAnnouncedSize(request.headers, bounds.uploadBytes);
       const part = await receivePart(name, request, 'file');
-      const id = await unitOfWork(actorOf(caller), (work) => keepPart(work, boardId, part)).catch(async (error: unknown) => {
-        await part.received.discard();
-        throw error;
-      });
+      const id = await unitOfWork(actorOf(caller), (work) => keepPart(work, boardId, part)).catch(
+        async (error: unknown) => {
+          await part.received.discard();
+          throw error;
+        },
+      );
       return presentFile(await one(boardId, id));
     },
 
@@ -92,14 +113,21 @@ export function createFilesService({ repository, store, unitOfWork }: Needs) {
 export function checkName(name: string): void {
   if (!/^[^/\\\u0000-\u001f]+\.(s\d{1,3}p|ts)$/i.test(name)) {
     throw problems.unprocessable([
-      { path: 'name', message: `"${name}" is not the name of a Touchstone file.`, mend: 'Upload a file that ends in .s1p to .s64p, or in .ts.' },
+      {
+        path: 'name',
+        message: `"${name}" is not the name of a Touchstone file.`,
+        mend: 'Upload a file that ends in .s1p to .s64p, or in .ts.',
+      },
     ]);
   }
 }
 
 function unreadable(error: TouchstoneError, field: string) {
   const where = error.line > 0 ? `Line ${error.line}: ` : '';
-  return problems.unprocessable([{ path: field, message: `${where}${error.reason}`, mend: error.mend }], error.message);
+  return problems.unprocessable(
+    [{ path: field, message: `${where}${error.reason}`, mend: error.mend }],
+    error.message,
+  );
 }
 
 export function presentFile(row: ListedFile): BoardFile {

@@ -23,9 +23,15 @@ export function summarise(file: TouchstoneFile): PartSummary {
     points: frequencies.length,
     fromHz: frequencies[0]!,
     toHz: frequencies[frequencies.length - 1]!,
-    referenceOhm: Array.from({ length: network.ports }, (_unused, port): [number, number] => [network.referenceOhm[port * 2]!, network.referenceOhm[port * 2 + 1]!]),
+    referenceOhm: Array.from({ length: network.ports }, (_unused, port): [number, number] => [
+      network.referenceOhm[port * 2]!,
+      network.referenceOhm[port * 2 + 1]!,
+    ]),
     likelyPortOrder: likelyOrder(file),
-    warnings: [...file.warnings.map(({ line, text }) => (line > 0 ? `Line ${line}: ${text}` : text)), ...modelWarnings(file)].slice(0, mostWarnings),
+    warnings: [
+      ...file.warnings.map(({ line, text }) => (line > 0 ? `Line ${line}: ${text}` : text)),
+      ...modelWarnings(file),
+    ].slice(0, mostWarnings),
   };
 }
 
@@ -35,10 +41,15 @@ function likelyOrder(file: TouchstoneFile): string | null {
 }
 
 function modelWarnings(file: TouchstoneFile): string[] {
-  const waves = needsWaves(file) ? ['The references are complex or change with frequency: say whether the waves are power or pseudo.'] : [];
+  const waves = needsWaves(file)
+    ? ['The references are complex or change with frequency: say whether the waves are power or pseudo.']
+    : [];
   if (file.network.ports > 8) return waves;
   const { passivity } = assessQuality(file.network);
-  const active = passivity.failsHz.length === 0 ? [] : [`Not passive (graded ${passivity.grade}) between ${span(passivity.failsHz)}; flagged, not refused.`];
+  const active =
+    passivity.failsHz.length === 0
+      ? []
+      : [`Not passive (graded ${passivity.grade}) between ${span(passivity.failsHz)}; flagged, not refused.`];
   return [...waves, ...active];
 }
 

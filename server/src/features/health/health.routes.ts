@@ -18,7 +18,12 @@ export function healthRoutes(sequelize: Sequelize, config: Config): Route[] {
           () => false,
         );
         if (!up) response.status(503);
-        response.json({ status: up ? 'ok' : 'degraded', database: up ? 'up' : 'down', version, demonstration: config.demonstration });
+        response.json({
+          status: up ? 'ok' : 'degraded',
+          database: up ? 'up' : 'down',
+          version,
+          demonstration: config.demonstration,
+        });
       },
     }),
   ];

@@ -45,7 +45,13 @@ export function createMasksRepository(sequelize: Sequelize) {
   return {
     /** The latest revision of each set that is not archived. */
     async latest(): Promise<MaskSet[]> {
-      const rows = await sequelize.query<{ id: string; maskKey: string; revision: number; revisionId: string; document: string }>(
+      const rows = await sequelize.query<{
+        id: string;
+        maskKey: string;
+        revision: number;
+        revisionId: string;
+        document: string;
+      }>(
         `SELECT s.id, s.mask_key AS maskKey, r.revision, r.id AS revisionId, r.document FROM mask_sets s
          JOIN mask_set_revisions r ON r.mask_set_id = s.id
          WHERE NOT s.archived AND r.revision = (SELECT MAX(revision) FROM mask_set_revisions WHERE mask_set_id = s.id)
@@ -63,8 +69,11 @@ export function createMasksRepository(sequelize: Sequelize) {
 
     /** Limits of named revisions, whichever are there. */
     async limitsOf(revisionIds: readonly string[]): Promise<Map<string, readonly Limit[]>> {
-      const rows = revisionIds.length === 0 ? [] : await revisions.findAll({ where: { id: [...revisionIds] } });
-      return new Map(rows.map((row) => [row.get().id, (JSON.parse(row.get().document) as MaskDocument).limits]));
+      const rows =
+        revisionIds.length === 0 ? [] : await revisions.findAll({ where: { id: [...revisionIds] } });
+      return new Map(
+        rows.map((row) => [row.get().id, (JSON.parse(row.get().document) as MaskDocument).limits]),
+      );
     },
 
     /** Adds a set, or a further revision where the content differs; returns whether anything was written. */
@@ -72,12 +81,35 @@ export function createMasksRepository(sequelize: Sequelize) {
       const sha256 = createHash('sha256').update(canonicalize(document)!).digest('hex');
       const known = await sets.findOne({ where: { maskKey: key }, transaction: work.transaction });
       const id = known?.get().id ?? randomUUID();
-      if (!known) await sets.create({ id, maskKey: key, archived: false, createdAt: work.at }, { transaction: work.transaction });
-      const last = await revisions.findOne({ where: { maskSetId: id }, order: [['revision', 'DESC']], transaction: work.transaction });
+      if (!known)
+        await sets.create(
+          { id, maskKey: key, archived: false, createdAt: work.at },
+          { transaction: work.transaction },
+        );
+      const last = await revisions.findOne({
+        where: { maskSetId: id },
+        order: [['revision', 'DESC']],
+        transaction: work.transaction,
+      });
       if (last?.get().sha256 === sha256) return false;
       const revision = (last?.get().revision ?? 0) + 1;
-      await revisions.create({ id: randomUUID(), maskSetId: id, revision, document: JSON.stringify(document), sha256, createdAt: work.at }, { transaction: work.transaction });
-      work.event({ what: 'mask-set.revised', subject: id, to: { key, revision, sha256 }, detail: `${document.title}, revision ${revision}` });
+      await revisions.create(
+        {
+          id: randomUUID(),
+          maskSetId: id,
+          revision,
+          document: JSON.stringify(document),
+          sha256,
+          createdAt: work.at,
+        },
+        { transaction: work.transaction },
+      );
+      work.event({
+        what: 'mask-set.revised',
+        subject: id,
+        to: { key, revision, sha256 },
+        detail: `${document.title}, revision ${revision}`,
+      });
       return true;
     },
   };

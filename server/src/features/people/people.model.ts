@@ -30,7 +30,11 @@ export interface TokenRow {
 /** What a mailed or printed secret may be used for, once. */
 export type TokenPurpose = 'reset' | 'invitation' | 'first-administrator';
 
-export function definePeople(sequelize: Sequelize): { people: Table<PersonRow>; roles: Table<RoleRow>; tokens: Table<TokenRow> } {
+export function definePeople(sequelize: Sequelize): {
+  people: Table<PersonRow>;
+  roles: Table<RoleRow>;
+  tokens: Table<TokenRow>;
+} {
   return {
     people: sequelize.define('people', {
       id: column.id,

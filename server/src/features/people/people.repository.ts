@@ -18,11 +18,16 @@ export function createPeopleRepository(sequelize: Sequelize) {
     return rows.map((row) => ({
       ...row,
       active: Boolean(row.active),
-      roles: held.map((entry) => entry.get()).flatMap((entry) => (entry.personId === row.id ? [entry.role] : [])),
+      roles: held
+        .map((entry) => entry.get())
+        .flatMap((entry) => (entry.personId === row.id ? [entry.role] : [])),
     }));
   }
 
-  async function one(where: Partial<PersonRow>, transaction?: Transaction): Promise<StoredPerson | undefined> {
+  async function one(
+    where: Partial<PersonRow>,
+    transaction?: Transaction,
+  ): Promise<StoredPerson | undefined> {
     const row = await people.findOne({ where, transaction });
     return row ? (await withRoles([row.get()], transaction))[0] : undefined;
   }
@@ -40,7 +45,10 @@ export function createPeopleRepository(sequelize: Sequelize) {
     async insert(work: Work, person: StoredPerson): Promise<void> {
       const { roles: held, ...row } = person;
       await people.create(row, { transaction: work.transaction });
-      await roles.bulkCreate(held.map((role) => ({ personId: person.id, role })), { transaction: work.transaction });
+      await roles.bulkCreate(
+        held.map((role) => ({ personId: person.id, role })),
+        { transaction: work.transaction },
+      );
     },
 
     async update(work: Work, id: string, change: Partial<PersonRow>): Promise<void> {
@@ -49,14 +57,22 @@ export function createPeopleRepository(sequelize: Sequelize) {
 
     async setRoles(work: Work, id: string, held: readonly Role[]): Promise<void> {
       await roles.destroy({ where: { personId: id }, transaction: work.transaction });
-      await roles.bulkCreate(held.map((role) => ({ personId: id, role })), { transaction: work.transaction });
+      await roles.bulkCreate(
+        held.map((role) => ({ personId: id, role })),
+        { transaction: work.transaction },
+      );
     },
 
     /** How many active administrators there are besides one person; the last cannot be lost. */
     async otherAdministrators(work: Work, id: string): Promise<number> {
-      const holders = await roles.findAll({ where: { role: 'administrator', personId: { [Op.ne]: id } }, transaction: work.transaction });
+      const holders = await roles.findAll({
+        where: { role: 'administrator', personId: { [Op.ne]: id } },
+        transaction: work.transaction,
+      });
       const ids = holders.map((holder) => holder.get().personId);
-      return ids.length === 0 ? 0 : people.count({ where: { id: ids, active: true }, transaction: work.transaction });
+      return ids.length === 0
+        ? 0
+        : people.count({ where: { id: ids, active: true }, transaction: work.transaction });
     },
 
     async insertToken(work: Work, token: TokenRow): Promise<void> {

@@ -14,7 +14,9 @@ export function peopleRoutes(people: PeopleService): Route[] {
       action: 'people.directory',
       summary: 'Names and roles, for choosing members',
       reply: api.directory,
-      handle: async () => ({ items: (await people.all()).filter((person) => person.active).map(presentDirectoryEntry) }),
+      handle: async () => ({
+        items: (await people.all()).filter((person) => person.active).map(presentDirectoryEntry),
+      }),
     }),
     route({
       method: 'get',
@@ -42,7 +44,8 @@ export function peopleRoutes(people: PeopleService): Route[] {
       params: one,
       body: api.personChange,
       reply: api.person,
-      handle: async ({ params, body, caller }) => presentPerson(await people.change(actorOf(caller), params.personId, body)),
+      handle: async ({ params, body, caller }) =>
+        presentPerson(await people.change(actorOf(caller), params.personId, body)),
     }),
     route({
       method: 'post',

@@ -27,7 +27,14 @@ interface Needs {
 export function createPeopleService({ config, sequelize, repository, unitOfWork }: Needs) {
   async function issueToken(work: Work, purpose: TokenPurpose, personId: string | null): Promise<string> {
     const { token, hash } = newToken();
-    await repository.insertToken(work, { hash, purpose, personId, expiresAt: new Date(work.at.getTime() + lifeMs[purpose]), usedAt: null, createdAt: work.at });
+    await repository.insertToken(work, {
+      hash,
+      purpose,
+      personId,
+      expiresAt: new Date(work.at.getTime() + lifeMs[purpose]),
+      usedAt: null,
+      createdAt: work.at,
+    });
     return token;
   }
 
@@ -37,9 +44,19 @@ export function createPeopleService({ config, sequelize, repository, unitOfWork 
     const invited = purpose === 'invitation';
     const words = invited ? 'Choose a password' : 'Set a new password';
     const told = invited
-      ? [`${person.name}, you have been invited to Tollgate as ${titles(person.roles)}.`, 'The link below lets you choose your password. It works once, for seven days.']
-      : [`${person.name}, a new password for Tollgate was asked for.`, 'The link below works once, for one hour. If it was not you, leave it: nothing has changed.'];
-    work.mail({ to: person.email, subject: invited ? 'Your invitation to Tollgate' : 'A new password for Tollgate', ...mailBodies(told, { words, url }) });
+      ? [
+          `${person.name}, you have been invited to Tollgate as ${titles(person.roles)}.`,
+          'The link below lets you choose your password. It works once, for seven days.',
+        ]
+      : [
+          `${person.name}, a new password for Tollgate was asked for.`,
+          'The link below works once, for one hour. If it was not you, leave it: nothing has changed.',
+        ];
+    work.mail({
+      to: person.email,
+      subject: invited ? 'Your invitation to Tollgate' : 'A new password for Tollgate',
+      ...mailBodies(told, { words, url }),
+    });
   }
 
   return {
@@ -64,19 +81,39 @@ export function createPeopleService({ config, sequelize, repository, unitOfWork 
       if (await repository.byEmail(input.email)) throw taken(input.email);
       const id = randomUUID();
       await unitOfWork(by, async (work) => {
-        const person: StoredPerson = { id, name: input.name, email: input.email, roles: unique(input.roles), passwordHash: null, active: true, createdAt: work.at, lastSignInAt: null };
+        const person: StoredPerson = {
+          id,
+          name: input.name,
+          email: input.email,
+          roles: unique(input.roles),
+          passwordHash: null,
+          active: true,
+          createdAt: work.at,
+          lastSignInAt: null,
+        };
         await repository.insert(work, person);
         await mailLink(work, person, 'invitation');
-        work.event({ what: 'person.invited', subject: id, to: { name: input.name, email: input.email, roles: person.roles }, detail: `${input.name} invited as ${titles(person.roles)}` });
+        work.event({
+          what: 'person.invited',
+          subject: id,
+          to: { name: input.name, email: input.email, roles: person.roles },
+          detail: `${input.name} invited as ${titles(person.roles)}`,
+        });
       });
       return (await repository.byId(id))!;
     },
 
-    async change(by: Actor, id: string, change: { name?: string; roles?: Role[]; active?: boolean }): Promise<StoredPerson> {
+    async change(
+      by: Actor,
+      id: string,
+      change: { name?: string; roles?: Role[]; active?: boolean },
+    ): Promise<StoredPerson> {
       await unitOfWork(by, async (work) => {
         const before = await repository.byId(id, work.transaction);
         if (!before) throw problems.notFound('This person');
-        const losesAdministrator = before.roles.includes('administrator') && (change.active === false || (change.roles && !change.roles.includes('administrator')));
+        const losesAdministrator =
+          before.roles.includes('administrator') &&
+          (change.active === false || (change.roles && !change.roles.includes('administrator')));
         if (losesAdministrator && (await repository.otherAdministrators(work, id)) === 0) {
           throw problems.conflict('This is the last active administrator; make someone else one first.', [
             { path: change.active === false ? 'active' : 'roles', message: 'The last administrator stays.' },
@@ -87,7 +124,13 @@ export function createPeopleService({ config, sequelize, repository, unitOfWork 
         if (roles) await repository.setRoles(work, id, unique(roles));
         if (change.active === false) await endSessions(sequelize, id, work.transaction);
         const { name, roles: held, active } = before;
-        work.event({ what: change.active === false ? 'person.deactivated' : 'person.changed', subject: id, from: { name, roles: held, active }, to: change, detail: `${name} changed` });
+        work.event({
+          what: change.active === false ? 'person.deactivated' : 'person.changed',
+          subject: id,
+          from: { name, roles: held, active },
+          to: change,
+          detail: `${name} changed`,
+        });
       });
       return (await repository.byId(id))!;
     },
@@ -99,7 +142,11 @@ export function createPeopleService({ config, sequelize, repository, unitOfWork 
         if (!person) throw problems.notFound('This person');
         if (!person.active) throw problems.conflict(`${person.name} is deactivated; activate first.`);
         await mailLink(work, person, person.passwordHash === null ? 'invitation' : 'reset');
-        work.event({ what: 'person.link-sent', subject: id, detail: `One-time link mailed to ${person.name}` });
+        work.event({
+          what: 'person.link-sent',
+          subject: id,
+          detail: `One-time link mailed to ${person.name}`,
+        });
       });
     },
 
@@ -109,7 +156,11 @@ export function createPeopleService({ config, sequelize, repository, unitOfWork 
       if (!person?.active) return;
       await unitOfWork(theProduct, async (work) => {
         await mailLink(work, person, 'reset');
-        work.event({ what: 'person.reset-asked', subject: person.id, detail: `New password asked for ${person.name}` });
+        work.event({
+          what: 'person.reset-asked',
+          subject: person.id,
+          detail: `New password asked for ${person.name}`,
+        });
       });
     },
 
@@ -123,20 +174,30 @@ export function createPeopleService({ config, sequelize, repository, unitOfWork 
         await repository.update(work, person.id, { passwordHash });
         await repository.closeTokens(work, open);
         await endSessions(sequelize, person.id, work.transaction);
-        work.event({ what: 'person.password-reset', subject: person.id, detail: `${person.name} set a password by link` });
+        work.event({
+          what: 'person.password-reset',
+          subject: person.id,
+          detail: `${person.name} set a password by link`,
+        });
       });
     },
 
     async changePassword(personId: string, current: string, next: string, sessionId: string): Promise<void> {
       const person = await repository.byId(personId);
       if (!person || !(await passwordMatches(current, person.passwordHash, config.scryptLogN))) {
-        throw problems.unprocessable([{ path: 'currentPassword', message: 'This is not your current password.' }]);
+        throw problems.unprocessable([
+          { path: 'currentPassword', message: 'This is not your current password.' },
+        ]);
       }
       const passwordHash = await hashPassword(next, config.scryptLogN);
       await unitOfWork(actor(person), async (work) => {
         await repository.update(work, personId, { passwordHash });
         await endSessions(sequelize, personId, work.transaction, sessionId);
-        work.event({ what: 'person.password-changed', subject: personId, detail: `${person.name} changed the password` });
+        work.event({
+          what: 'person.password-changed',
+          subject: personId,
+          detail: `${person.name} changed the password`,
+        });
       });
     },
 
@@ -145,13 +206,22 @@ export function createPeopleService({ config, sequelize, repository, unitOfWork 
     /** The link that makes the first administrator; printed by the start, never mailed. */
     async firstAdministratorLink(): Promise<string> {
       const token = await unitOfWork(theProduct, async (work) => {
-        work.event({ what: 'administrator.link-printed', subject: 'people', detail: 'One-time link for the first administrator printed' });
+        work.event({
+          what: 'administrator.link-printed',
+          subject: 'people',
+          detail: 'One-time link for the first administrator printed',
+        });
         return issueToken(work, 'first-administrator', null);
       });
       return `${config.url}/first/${token}`;
     },
 
-    async claimAdministrator(input: { token: string; name: string; email: string; password: string }): Promise<StoredPerson> {
+    async claimAdministrator(input: {
+      token: string;
+      name: string;
+      email: string;
+      password: string;
+    }): Promise<StoredPerson> {
       const passwordHash = await hashPassword(input.password, config.scryptLogN);
       const id = randomUUID();
       await unitOfWork(theProduct, async (work) => {
@@ -159,9 +229,23 @@ export function createPeopleService({ config, sequelize, repository, unitOfWork 
         if (open?.purpose !== 'first-administrator' || (await repository.count()) > 0) {
           throw problems.gone('The link has been used or has run out; start Tollgate again for a new one.');
         }
-        await repository.insert(work, { id, name: input.name, email: input.email, roles: ['administrator'], passwordHash, active: true, createdAt: work.at, lastSignInAt: null });
+        await repository.insert(work, {
+          id,
+          name: input.name,
+          email: input.email,
+          roles: ['administrator'],
+          passwordHash,
+          active: true,
+          createdAt: work.at,
+          lastSignInAt: null,
+        });
         await repository.closeTokens(work, open);
-        work.event({ what: 'administrator.claimed', subject: id, to: { name: input.name, email: input.email }, detail: `${input.name} became the first administrator` });
+        work.event({
+          what: 'administrator.claimed',
+          subject: id,
+          to: { name: input.name, email: input.email },
+          detail: `${input.name} became the first administrator`,
+        });
       });
       return (await repository.byId(id))!;
     },
@@ -181,5 +265,7 @@ function unique<Item>(items: readonly Item[]): Item[] {
 }
 
 function taken(email: string) {
-  return problems.conflict('Someone has this address already.', [{ path: 'email', message: `${email} belongs to another person.` }]);
+  return problems.conflict('Someone has this address already.', [
+    { path: 'email', message: `${email} belongs to another person.` },
+  ]);
 }

@@ -1,7 +1,13 @@
 import { createHash, randomBytes, scrypt, timingSafeEqual } from 'node:crypto';
 import { promisify } from 'node:util';
 
-const derive = promisify<string | Buffer, Buffer, number, { N: number; r: number; p: number; maxmem: number }, Buffer>(scrypt);
+const derive = promisify<
+  string | Buffer,
+  Buffer,
+  number,
+  { N: number; r: number; p: number; maxmem: number },
+  Buffer
+>(scrypt);
 
 /** Hash of a password: `scrypt$logN$salt$hash`, base64url. */
 export async function hashPassword(password: string, logN: number): Promise<string> {
@@ -14,14 +20,21 @@ export async function hashPassword(password: string, logN: number): Promise<stri
  * Whether a password belongs to a stored hash. Without a stored hash (an unknown account, an invitation not taken up) the
  * same work is done and the answer is no.
  */
-export async function passwordMatches(password: string, stored: string | null | undefined, logN: number): Promise<boolean> {
+export async function passwordMatches(
+  password: string,
+  stored: string | null | undefined,
+  logN: number,
+): Promise<boolean> {
   const [, storedLogN, salt, hash] = (stored ?? '').split('$');
   if (!salt || !hash) {
     await stretch(password, randomBytes(16), logN);
     return false;
   }
   const expected = Buffer.from(hash, 'base64url');
-  return timingSafeEqual(expected, await stretch(password, Buffer.from(salt, 'base64url'), Number(storedLogN)));
+  return timingSafeEqual(
+    expected,
+    await stretch(password, Buffer.from(salt, 'base64url'), Number(storedLogN)),
+  );
 }
 
 function stretch(password: string, salt: Buffer, logN: number): Promise<Buffer> {

@@ -34,15 +34,17 @@ export function sessionRoutes({ config, clock, people, passport, throttle }: Nee
   function signIn(request: Request, response: Response): Promise<Caller> {
     return new Promise((resolve, reject) => {
       const answered = (error: unknown, person: Caller | false | undefined) => {
-        if (error) return reject(error as Error);
+        if (error) return reject(error);
         if (!person) return reject(problems.wrongCredentials());
-        request.logIn(person as Express.User, (failure: unknown) => (failure ? reject(failure as Error) : resolve(person)));
+        request.logIn(person, (failure: unknown) => (failure ? reject(failure) : resolve(person)));
       };
-      (passport.authenticate('local', answered) as (request: Request, response: Response, next: (error?: unknown) => void) => void)(
-        request,
-        response,
-        (error) => reject(error as Error),
-      );
+      (
+        passport.authenticate('local', answered) as (
+          request: Request,
+          response: Response,
+          next: (error?: unknown) => void,
+        ) => void
+      )(request, response, (error) => reject(error));
     });
   }
 
@@ -77,7 +79,7 @@ export function sessionRoutes({ config, clock, people, passport, throttle }: Nee
       summary: 'Sign out',
       handle: ({ request, response }) =>
         new Promise<void>((resolve, reject) => {
-          request.session.destroy((error: unknown) => (error ? reject(error as Error) : resolve()));
+          request.session.destroy((error: unknown) => (error ? reject(error) : resolve()));
           response.clearCookie(config.cookieName);
         }),
     }),

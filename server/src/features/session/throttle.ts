@@ -32,7 +32,10 @@ export function createThrottle(sequelize: Sequelize, clock: Clock) {
     /** Refuses with Retry-After where too many have failed. */
     async admit(purpose: string, account: string, address: string): Promise<void> {
       const since = new Date(clock.now().getTime() - windowMs);
-      const rows = await attempts.findAll({ where: { purpose, address, at: { [Op.gt]: since } }, order: [['at', 'ASC']] });
+      const rows = await attempts.findAll({
+        where: { purpose, address, at: { [Op.gt]: since } },
+        order: [['at', 'ASC']],
+      });
       const all = rows.map((row) => row.get());
       const own = all.filter((row) => row.account === hashed(account));
       const full = own.length >= mostPerAccount ? own : all.length >= mostPerAddress ? all : undefined;

@@ -77,7 +77,8 @@ export function readConfig(env: Environment, processors: number): Config {
 
 function readDatabase(env: Environment): DatabaseAccess {
   const text = env['TOLLGATE_DB'];
-  if (!text) throw new ConfigError('TOLLGATE_DB is missing: JSON with host, port, user, password and database.');
+  if (!text)
+    throw new ConfigError('TOLLGATE_DB is missing: JSON with host, port, user, password and database.');
   try {
     return databaseAccess.parse(JSON.parse(text));
   } catch (error) {
@@ -103,7 +104,8 @@ function flag(env: Environment, name: string, fallback: boolean): boolean {
 }
 
 function address(text: string): string {
-  if (!URL.canParse(text)) throw new ConfigError(`TOLLGATE_URL=${text} must be an address such as https://tollgate.example.com.`);
+  if (!URL.canParse(text))
+    throw new ConfigError(`TOLLGATE_URL=${text} must be an address such as https://tollgate.example.com.`);
   return text.replace(/\/+$/, '');
 }
 

@@ -13,7 +13,12 @@ export function connectDatabase(access: DatabaseAccess, poolSize: number): Seque
     logging: false,
     pool: { max: poolSize, min: 0, idle: 10_000, acquire: 5_000 },
     define: { underscored: true, timestamps: false, freezeTableName: true },
-    dialectOptions: { connectTimeout: 2_000, bigIntAsNumber: true, insertIdAsNumber: true, allowPublicKeyRetrieval: true },
+    dialectOptions: {
+      connectTimeout: 2_000,
+      bigIntAsNumber: true,
+      insertIdAsNumber: true,
+      allowPublicKeyRetrieval: true,
+    },
     retry: { max: 1 },
   });
 }
@@ -22,8 +27,14 @@ export function connectDatabase(access: DatabaseAccess, poolSize: number): Seque
 export function isDatabaseAway(error: unknown): boolean {
   if (!(error instanceof Error)) return false;
   if (/^SequelizeConnection|^SequelizeHostNotFound|^SequelizeAccessDenied/.test(error.name)) return true;
-  const codes = [error, (error as { parent?: unknown }).parent, (error as { original?: unknown }).original].map(
-    (each) => (each as { code?: string } | undefined)?.code ?? '',
+  const codes = [
+    error,
+    (error as { parent?: unknown }).parent,
+    (error as { original?: unknown }).original,
+  ].map((each) => (each as { code?: string } | undefined)?.code ?? '');
+  return codes.some((code) =>
+    /ECONNREFUSED|ECONNRESET|EPIPE|ER_SOCKET|ER_CONNECTION|PROTOCOL_CONNECTION_LOST|ER_GET_CONNECTION_TIMEOUT|ER_SERVER_SHUTDOWN/.test(
+      code,
+    ),
   );
-  return codes.some((code) => /ECONNREFUSED|ECONNRESET|EPIPE|ER_SOCKET|ER_CONNECTION|PROTOCOL_CONNECTION_LOST|ER_GET_CONNECTION_TIMEOUT|ER_SERVER_SHUTDOWN/.test(code));
 }

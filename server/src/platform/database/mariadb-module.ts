@@ -21,5 +21,6 @@ function wrap(connection: mariadb.Connection): mariadb.Connection {
 
 export const mariadbModule = {
   ...mariadb,
-  createConnection: async (options: mariadb.ConnectionConfig) => wrap(await mariadb.createConnection(options)),
+  createConnection: async (options: mariadb.ConnectionConfig) =>
+    wrap(await mariadb.createConnection(options)),
 };

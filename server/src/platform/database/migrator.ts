@@ -19,10 +19,10 @@ export function sqlMigration(name: string, up: string, down: string): Migration 
 
 function umzugOf(sequelize: Sequelize, migrations: readonly Migration[]) {
   return new Umzug({
-    migrations: migrations.map(({ name, up, down }) => ({
-      name,
-      up: ({ context }: { context: QueryInterface }) => up(context),
-      down: ({ context }: { context: QueryInterface }) => down(context),
+    migrations: migrations.map((step) => ({
+      name: step.name,
+      up: ({ context }: { context: QueryInterface }) => step.up(context),
+      down: ({ context }: { context: QueryInterface }) => step.down(context),
     })),
     context: sequelize.getQueryInterface(),
     storage: new SequelizeStorage({ sequelize, tableName: 'migrations' }),
@@ -37,7 +37,9 @@ export async function migrateUp(sequelize: Sequelize, migrations: readonly Migra
 
 /** Takes everything back; for tests and for a step back by hand. */
 export async function migrateDown(sequelize: Sequelize, migrations: readonly Migration[]): Promise<string[]> {
-  return alone(sequelize, async () => (await umzugOf(sequelize, migrations).down({ to: 0 })).map((step) => step.name));
+  return alone(sequelize, async () =>
+    (await umzugOf(sequelize, migrations).down({ to: 0 })).map((step) => step.name),
+  );
 }
 
 async function alone<Result>(sequelize: Sequelize, run: () => Promise<Result>): Promise<Result> {
@@ -49,11 +51,16 @@ async function alone<Result>(sequelize: Sequelize, run: () => Promise<Result>): 
       type: QueryTypes.SELECT,
       transaction,
     });
-    if (Number(row?.held) !== 1) throw new Error('Another process is migrating this database; it did not finish within a minute.');
+    if (Number(row?.held) !== 1)
+      throw new Error('Another process is migrating this database; it did not finish within a minute.');
     try {
       return await run();
     } finally {
-      await sequelize.query('SELECT RELEASE_LOCK(:lock)', { replacements: { lock }, type: QueryTypes.SELECT, transaction });
+      await sequelize.query('SELECT RELEASE_LOCK(:lock)', {
+        replacements: { lock },
+        type: QueryTypes.SELECT,
+        transaction,
+      });
     }
   });
 }

@@ -11,6 +11,8 @@ import { problems } from '../http/problem';
 export interface ReceivedFile {
   readonly sha256: string;
   readonly sizeBytes: number;
+  /** Where it waits. */
+  readonly path: string;
   /** Moves it to its place by content; done inside the unit of work that writes its row. */
   keep(): Promise<void>;
   discard(): Promise<void>;
@@ -37,7 +39,11 @@ export class FileStore {
    * Streams a body through limit, hash and reader into tmp; a refusal, an error of the reader or an abort removes it
    * at once.
    */
-  async receive(body: Readable, limitBytes: number, onChunk?: (chunk: Buffer) => void): Promise<ReceivedFile> {
+  async receive(
+    body: Readable,
+    limitBytes: number,
+    onChunk?: (chunk: Buffer) => void,
+  ): Promise<ReceivedFile> {
     const path = join(this.directory, 'tmp', randomUUID());
     const handle = await open(path, 'wx', 0o600);
     const hash = createHash('sha256');
@@ -82,6 +88,7 @@ export class FileStore {
     return {
       sha256,
       sizeBytes,
+      path,
       // A unit of work may be tried again after a deadlock: the file moves once.
       keep: () => (kept ??= this.moveInto(path, this.pathOf(sha256))),
       discard: () => rm(path, { force: true }),
@@ -98,7 +105,13 @@ export class FileStore {
   }
 }
 
-async function pour(body: Readable, handle: FileHandle, hash: Hash, limitBytes: number, onChunk?: (chunk: Buffer) => void): Promise<number> {
+async function pour(
+  body: Readable,
+  handle: FileHandle,
+  hash: Hash,
+  limitBytes: number,
+  onChunk?: (chunk: Buffer) => void,
+): Promise<number> {
   let size = 0;
   const ended = finished(body, { writable: false });
   // `finished` reports an abort that the loop below may miss; its rejection is taken up at the end.
@@ -130,7 +143,8 @@ export async function readAll(body: Readable, limitBytes: number): Promise<Buffe
   let size = 0;
   body.on('data', (chunk: Buffer) => {
     size += chunk.length;
-    if (size > limitBytes) body.destroy(problems.tooLarge(`The content is larger than ${megabytes(limitBytes)}.`));
+    if (size > limitBytes)
+      body.destroy(problems.tooLarge(`The content is larger than ${megabytes(limitBytes)}.`));
     else chunks.push(chunk);
   });
   await once(body, 'end');

@@ -50,7 +50,11 @@ function fromBodyReader(error: unknown): HttpProblem | undefined {
   if (type === 'entity.parse.failed') {
     return problems.invalid([{ path: '', message: `The body is not JSON: ${message}.` }]);
   }
-  if (type === 'encoding.unsupported' || type === 'charset.unsupported') return problems.wrongType('Send JSON in UTF-8.');
-  if (type === 'request.aborted') return new HttpProblem(400, 'aborted', 'The request ended before it was whole.');
-  return error instanceof URIError ? problems.invalid([{ path: '', message: 'The address holds a broken escape.' }]) : undefined;
+  if (type === 'encoding.unsupported' || type === 'charset.unsupported')
+    return problems.wrongType('Send JSON in UTF-8.');
+  if (type === 'request.aborted')
+    return new HttpProblem(400, 'aborted', 'The request ended before it was whole.');
+  return error instanceof URIError
+    ? problems.invalid([{ path: '', message: 'The address holds a broken escape.' }])
+    : undefined;
 }

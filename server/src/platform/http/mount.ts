@@ -1,4 +1,10 @@
-import express, { type Express, type NextFunction, type Request, type RequestHandler, type Response } from 'express';
+import express, {
+  type Express,
+  type NextFunction,
+  type Request,
+  type RequestHandler,
+  type Response,
+} from 'express';
 import { bounds, problemsOf, rightOf, roleAllows } from '@tollgate/contracts';
 import * as z from 'zod';
 import { problems } from './problem';
@@ -17,7 +23,9 @@ export function mountRoutes(app: Express, routes: readonly Route[], guards: Guar
   const twin = names.find((name, i) => names.indexOf(name) !== i);
   if (twin) throw new Error(`Two routes are declared as ${twin}.`);
   for (const entry of routes) {
-    const steps: RequestHandler[] = entry.raw ? [] : [express.json({ limit: bounds.documentBytes + 4096, strict: true })];
+    const steps: RequestHandler[] = entry.raw
+      ? []
+      : [express.json({ limit: bounds.documentBytes + 4096, strict: true })];
     app[entry.method](`/api${entry.path}`, authenticate(entry, guards), ...steps, (request, response) =>
       answer(entry, guards, request, response),
     );
@@ -31,7 +39,11 @@ function authenticate(entry: Route, guards: Guards): RequestHandler {
     if (right.scope === 'public' || right.scope === 'demo') return next();
     if (!callerOf(request)) return next(problems.signedOut());
     // A role that may never do this is told so before its body is read.
-    next(roleAllows(entry.action, callerOf(request)!.roles) || right.scope === 'member' ? undefined : problems.forbidden());
+    next(
+      roleAllows(entry.action, callerOf(request)!.roles) || right.scope === 'member'
+        ? undefined
+        : problems.forbidden(),
+    );
   };
 }
 
@@ -41,14 +53,23 @@ async function answer(entry: Route, guards: Guards, request: Request, response: 
   const boardId = await authorise(entry, guards, params, callerOf(request));
   if (entry.raw) checkMediaType(request, entry.raw);
   const body = entry.raw ? undefined : parsed(entry.body, entry.body ? request.body : undefined, '');
-  const call = { params, query, body, request, response, caller: callerOf(request), boardId } as Call<never, never, never>;
+  const call = { params, query, body, request, response, caller: callerOf(request), boardId } as Call<
+    never,
+    never,
+    never
+  >;
   const result = await entry.handle(call as never);
   if (response.headersSent || response.writableEnded || typeof entry.reply === 'string') return;
   if (entry.reply === undefined) response.status(204).end();
   else response.status(entry.status ?? 200).json(result);
 }
 
-async function authorise(entry: Route, guards: Guards, params: unknown, caller: Caller | undefined): Promise<string> {
+async function authorise(
+  entry: Route,
+  guards: Guards,
+  params: unknown,
+  caller: Caller | undefined,
+): Promise<string> {
   if (rightOf(entry.action).scope !== 'member' || !caller) return '';
   const boardId = entry.board ? await entry.board(params) : null;
   // Someone else's board and no board at all look the same.
@@ -68,7 +89,8 @@ const nothing = z.looseObject({});
 
 function checkMediaType(request: Request, allowed: readonly string[]): void {
   const type = (request.headers['content-type'] ?? '').split(';')[0]!.trim().toLowerCase();
-  if (!allowed.includes(type)) throw problems.wrongType(`Send the content as ${allowed.join(' or ')}, not as ${type || 'nothing'}.`);
+  if (!allowed.includes(type))
+    throw problems.wrongType(`Send the content as ${allowed.join(' or ')}, not as ${type || 'nothing'}.`);
 }
 
 /** The signed-in person of a request, put there by passport. */

@@ -13,7 +13,12 @@ export function describeApi(routes: readonly Route[], version: string): Json {
   }
   return {
     openapi: '3.1.0',
-    info: { title: 'Tollgate', version, description: 'Channels of a board held against their loss masks. Results are estimates, no compliance test.' },
+    info: {
+      title: 'Tollgate',
+      version,
+      description:
+        'Channels of a board held against their loss masks. Results are estimates, no compliance test.',
+    },
     paths,
     components: {
       securitySchemes: { session: { type: 'apiKey', in: 'cookie', name: 'tg-*' } },
@@ -27,14 +32,19 @@ function operation(entry: Route): Json {
   const open = right.scope === 'public' || right.scope === 'demo';
   return {
     summary: entry.summary,
-    operationId: `${entry.method} ${entry.path}`.replace(/[^A-Za-z]+(\w)/g, (_all, letter: string) => letter.toUpperCase()),
+    operationId: `${entry.method} ${entry.path}`.replace(/[^A-Za-z]+(\w)/g, (_all, letter: string) =>
+      letter.toUpperCase(),
+    ),
     'x-right': { action: entry.action, ...right },
     security: open ? [] : [{ session: [] }],
     parameters: [...parameters(entry.params, 'path'), ...parameters(entry.query, 'query')],
     ...requestBody(entry),
     responses: {
       [String(entry.status ?? (entry.reply === undefined ? 204 : 200))]: success(entry),
-      default: { description: 'What is wrong, where, and how to mend it', content: { [api.problemMediaType]: { schema: { $ref: '#/components/schemas/Problem' } } } },
+      default: {
+        description: 'What is wrong, where, and how to mend it',
+        content: { [api.problemMediaType]: { schema: { $ref: '#/components/schemas/Problem' } } },
+      },
     },
   };
 }
@@ -42,19 +52,38 @@ function operation(entry: Route): Json {
 function success(entry: Route): Json {
   if (entry.reply === undefined) return { description: 'Done' };
   if (typeof entry.reply === 'string') return { description: 'The content', content: { [entry.reply]: {} } };
-  return { description: 'The reply', content: { 'application/json': { schema: schemaOf(entry.reply, 'output') } } };
+  return {
+    description: 'The reply',
+    content: { 'application/json': { schema: schemaOf(entry.reply, 'output') } },
+  };
 }
 
 function requestBody(entry: Route): Json {
-  if (entry.raw) return { requestBody: { required: true, content: Object.fromEntries(entry.raw.map((type) => [type, {}])) } };
+  if (entry.raw)
+    return {
+      requestBody: { required: true, content: Object.fromEntries(entry.raw.map((type) => [type, {}])) },
+    };
   if (!entry.body) return {};
-  return { requestBody: { required: true, content: { 'application/json': { schema: schemaOf(entry.body, 'input') } } } };
+  return {
+    requestBody: {
+      required: true,
+      content: { 'application/json': { schema: schemaOf(entry.body, 'input') } },
+    },
+  };
 }
 
 function parameters(schema: z.ZodType | undefined, place: 'path' | 'query'): Json[] {
   if (!schema) return [];
-  const { properties = {}, required = [] } = schemaOf(schema, 'input') as { properties?: Record<string, Json>; required?: string[] };
-  return Object.entries(properties).map(([name, inner]) => ({ name, in: place, required: place === 'path' || required.includes(name), schema: inner }));
+  const { properties = {}, required = [] } = schemaOf(schema, 'input') as {
+    properties?: Record<string, Json>;
+    required?: string[];
+  };
+  return Object.entries(properties).map(([name, inner]) => ({
+    name,
+    in: place,
+    required: place === 'path' || required.includes(name),
+    schema: inner,
+  }));
 }
 
 function schemaOf(schema: z.ZodType, io: 'input' | 'output'): Json {

@@ -1,5 +1,5 @@
 import type { Request, Response } from 'express';
-import type { Action } from '@tollgate/contracts';
+import type { Action, Role } from '@tollgate/contracts';
 import type * as z from 'zod';
 import type { Actor } from '../work';
 
@@ -8,7 +8,7 @@ export interface Caller {
   readonly id: string;
   readonly name: string;
   readonly email: string;
-  readonly roles: readonly import('@tollgate/contracts').Role[];
+  readonly roles: readonly Role[];
 }
 
 export interface Call<Params, Query, Body> {
@@ -58,7 +58,9 @@ export interface Route extends RouteShape<z.ZodType, z.ZodType, z.ZodType> {
  * authorise. `handle` acts and returns what is presented; it may write to `response` itself where the reply is no JSON.
  */
 export function route<Params extends z.ZodType, Query extends z.ZodType, Body extends z.ZodType>(
-  shape: RouteShape<Params, Query, Body> & { handle: Handler<z.output<Params>, z.output<Query>, z.output<Body>> },
+  shape: RouteShape<Params, Query, Body> & {
+    handle: Handler<z.output<Params>, z.output<Query>, z.output<Body>>;
+  },
 ): Route {
   return shape as unknown as Route;
 }

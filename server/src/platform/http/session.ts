@@ -32,7 +32,10 @@ export function createSessionStore(sequelize: Sequelize): Store {
     table: 'sessions',
     expiration: idleMs,
     checkExpirationInterval: -1,
-    extendDefaultFields: (defaults, data: SessionData) => ({ ...defaults, personId: data.passport?.user ?? null }) as typeof defaults,
+    extendDefaultFields: (defaults, data: SessionData) => ({
+      ...defaults,
+      personId: data.passport?.user ?? null,
+    }),
   });
 }
 
@@ -64,7 +67,12 @@ export function csrfTokenOf(request: Request): string {
 }
 
 /** Ends a person's sessions, all but one where it is named. */
-export async function endSessions(sequelize: Sequelize, personId: string, transaction: Transaction, except?: string): Promise<void> {
+export async function endSessions(
+  sequelize: Sequelize,
+  personId: string,
+  transaction: Transaction,
+  except?: string,
+): Promise<void> {
   await sequelize.models['sessions']!.destroy({
     where: { personId, ...(except ? { sid: { [Op.ne]: except } } : {}) },
     transaction,

@@ -121,7 +121,18 @@ export class JobRunner {
   /** Queues a job outside a unit of work: for what the start and timers ask for. */
   async queue(kind: string, payload: unknown, dedupeKey: string, runAfter: Date): Promise<void> {
     await this.jobs.bulkCreate(
-      [{ id: randomUUID(), kind, payload: JSON.stringify(payload), state: 'waiting', attempts: 0, runAfter, dedupeKey, createdAt: this.clock.now() }],
+      [
+        {
+          id: randomUUID(),
+          kind,
+          payload: JSON.stringify(payload),
+          state: 'waiting',
+          attempts: 0,
+          runAfter,
+          dedupeKey,
+          createdAt: this.clock.now(),
+        },
+      ],
       { ignoreDuplicates: true },
     );
   }

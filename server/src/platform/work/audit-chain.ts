@@ -1,7 +1,7 @@
 import { createHash } from 'node:crypto';
 import canonicalize from 'canonicalize';
 import { QueryTypes, type Sequelize, type Transaction } from 'sequelize';
-import type { NewEvent } from './unit-of-work';
+import type { NewEvent } from './event';
 import type { EventRow, WorkModels } from './models';
 
 /** Hash before the first event. */
@@ -13,7 +13,13 @@ interface Head {
 }
 
 /** The bytes of an event that are hashed and stored: RFC 8785 JSON. */
-function eventBody(seq: number, previousHash: string, at: Date, personId: string | null, event: NewEvent): string {
+function eventBody(
+  seq: number,
+  previousHash: string,
+  at: Date,
+  personId: string | null,
+  event: NewEvent,
+): string {
   return canonicalize({
     seq,
     previousHash,
@@ -51,7 +57,17 @@ export async function appendEvents(
   const rows = events.map((event): EventRow => {
     seq += 1;
     const body = eventBody(seq, hash, at, personId, event);
-    const row = { seq, at, personId, what: event.what, subject: event.subject, boardId: event.boardId ?? null, body, previousHash: hash, hash: hashOf(body) };
+    const row = {
+      seq,
+      at,
+      personId,
+      what: event.what,
+      subject: event.subject,
+      boardId: event.boardId ?? null,
+      body,
+      previousHash: hash,
+      hash: hashOf(body),
+    };
     hash = row.hash;
     return row;
   });
@@ -81,18 +97,29 @@ export async function verifyChain(sequelize: Sequelize): Promise<ChainVerdict> {
     if (rows.length === 0) break;
     for (const row of rows) {
       const reason = faultOf({ ...row, seq: Number(row.seq) }, last);
-      if (reason) return { sound: false, events: last.seq, head: last, fault: { seq: Number(row.seq), reason } };
+      if (reason)
+        return { sound: false, events: last.seq, head: last, fault: { seq: Number(row.seq), reason } };
       last = { seq: Number(row.seq), hash: row.hash };
     }
   }
-  const [head] = await sequelize.query<Head>('SELECT seq, hash FROM audit_head WHERE id = 1', { type: QueryTypes.SELECT });
+  const [head] = await sequelize.query<Head>('SELECT seq, hash FROM audit_head WHERE id = 1', {
+    type: QueryTypes.SELECT,
+  });
   if (!head || Number(head.seq) !== last.seq || head.hash !== last.hash) {
-    return { sound: false, events: last.seq, head: last, fault: { seq: last.seq + 1, reason: 'the head names an event that is not there' } };
+    return {
+      sound: false,
+      events: last.seq,
+      head: last,
+      fault: { seq: last.seq + 1, reason: 'the head names an event that is not there' },
+    };
   }
   return { sound: true, events: last.seq, head: last };
 }
 
-function faultOf(row: { seq: number; body: string; previous_hash: string; hash: string }, last: Head): string | undefined {
+function faultOf(
+  row: { seq: number; body: string; previous_hash: string; hash: string },
+  last: Head,
+): string | undefined {
   if (row.seq !== last.seq + 1) return `event ${last.seq + 1} is missing`;
   if (row.previous_hash !== last.hash) return 'it does not follow from the event before it';
   if (hashOf(row.body) !== row.hash) return 'its content was altered after it was written';

@@ -4,5 +4,6 @@
  * transaction with its events chained, its mail in the outbox and its jobs queued.
  */
 export * from './audit-chain';
+export * from './event';
 export * from './models';
 export * from './unit-of-work';

@@ -2,6 +2,7 @@ import { randomUUID } from 'node:crypto';
 import type { Sequelize, Transaction } from 'sequelize';
 import type { Clock } from '../clock';
 import { appendEvents } from './audit-chain';
+import type { NewEvent } from './event';
 import { defineWorkModels, type ChangeRow, type JobRow, type OutboxRow, type WorkModels } from './models';
 
 /** Who acts: a person, or the product itself (a job, the start). */
@@ -11,18 +12,6 @@ export interface Actor {
 }
 
 export const theProduct: Actor = { personId: null, name: 'Tollgate' };
-
-export interface NewEvent {
-  /** Stable name, `thing.happened`. */
-  readonly what: string;
-  /** Identifier of what it happened to. */
-  readonly subject: string;
-  readonly from?: unknown;
-  readonly to?: unknown;
-  /** One sentence for the audit page. */
-  readonly detail?: string;
-  readonly boardId?: string | null;
-}
 
 export interface NewMail {
   readonly to: string;
@@ -40,7 +29,9 @@ export interface NewJob {
 }
 
 /** A line for those who look at the board right now; kept for a day, no part of the record. */
-export type NewChange = Partial<Pick<ChangeRow, 'boardId' | 'revisionId' | 'channelId' | 'version'>> & { what: string };
+export type NewChange = Partial<Pick<ChangeRow, 'boardId' | 'revisionId' | 'channelId' | 'version'>> & {
+  what: string;
+};
 
 /** What a write needs; without one nothing can be written. */
 export interface Work {
@@ -67,7 +58,11 @@ interface Gathered {
  * caller is told has been committed; what throws leaves nothing. Deadlocks are tried again, so `act` must hold no
  * outside effects.
  */
-export function createUnitOfWork(sequelize: Sequelize, clock: Clock, committed: () => void = () => undefined): UnitOfWork {
+export function createUnitOfWork(
+  sequelize: Sequelize,
+  clock: Clock,
+  committed: () => void = () => undefined,
+): UnitOfWork {
   const models = defineWorkModels(sequelize);
   return async (actor, act) => {
     for (let attempt = 1; ; attempt++) {
@@ -103,7 +98,13 @@ function workOf(transaction: Transaction, actor: Actor, at: Date, gathered: Gath
   };
 }
 
-async function writeSideRows(models: WorkModels, transaction: Transaction, actor: Actor, at: Date, gathered: Gathered): Promise<void> {
+async function writeSideRows(
+  models: WorkModels,
+  transaction: Transaction,
+  actor: Actor,
+  at: Date,
+  gathered: Gathered,
+): Promise<void> {
   const mails = gathered.mails.map((mail) => outboxRow(mail, at));
   const jobs = [
     ...gathered.jobs.map((job) => jobRow(job, at)),

@@ -1,0 +1,2 @@
+export { maskSeeds, type MaskSeed } from './masks';
+export { seedDemonstration } from './demonstration/seed-demonstration';

@@ -1,0 +1,1 @@
+export { ChangeFeed, streamRoutes } from './stream.routes';
