@@ -3,7 +3,7 @@ import { kindDescription } from './kinds';
 import type { Limit } from './limits';
 
 /** A channel file in which every element and limit has its id. */
-export type CompleteChannel = ChannelFile & {
+export type CompleteChannel = Omit<ChannelFile, 'elements' | 'limits'> & {
   elements: (ChannelElement & { id: string })[];
   limits: (Limit & { id: string })[];
 };
