@@ -1,0 +1,134 @@
+import { dbPerNeper, lightSpeedMPerS } from './constants';
+import type { BranchValue } from './branch';
+import { setValue } from './branch';
+
+/** A uniform line of real impedance whose loss grows with sqrt(f) and f. */
+export interface LossyLine {
+  readonly z0Ohm: number;
+  readonly lengthM: number;
+  readonly effectivePermittivity: number;
+  readonly lossSqrtDbPerM: number;
+  readonly lossLinearDbPerM: number;
+}
+
+/** Attenuation of the whole line in dB: (sqrt-loss sqrt(f/GHz) + linear-loss f/GHz) x length. */
+export function lineLossDb(line: LossyLine, frequencyHz: number): number {
+  const gigahertz = frequencyHz / 1e9;
+  return (line.lossSqrtDbPerM * Math.sqrt(gigahertz) + line.lossLinearDbPerM * gigahertz) * line.lengthM;
+}
+
+/** Phase of the whole line in radians: 2 pi f sqrt(eps) l / c0. */
+export function linePhaseRad(line: LossyLine, frequencyHz: number): number {
+  return (2 * Math.PI * frequencyHz * Math.sqrt(line.effectivePermittivity) * line.lengthM) / lightSpeedMPerS;
+}
+
+/**
+ * S of a line between equal real references, from its own reflection and one pass: with G = (Zc - R)/(Zc + R) and
+ * P = e^(-gamma l), S11 = G (1 - P^2)/(1 - G^2 P^2), S21 = P (1 - G^2)/(1 - G^2 P^2). Nothing large is subtracted, so S21 keeps
+ * its relative accuracy however lossy the line (multiple reflections, Pozar 2.4).
+ */
+export function lineInto(
+  out: Float64Array,
+  at: number,
+  line: LossyLine,
+  frequencyHz: number,
+  referenceOhm: number,
+): void {
+  const reflection = (line.z0Ohm - referenceOhm) / (line.z0Ohm + referenceOhm);
+  passInto(
+    out,
+    at,
+    reflection,
+    0,
+    lineLossDb(line, frequencyHz) / dbPerNeper,
+    linePhaseRad(line, frequencyHz),
+  );
+}
+
+/** The same for a complex reflection; attenuation in nepers, phase in radians. */
+export function passInto(
+  out: Float64Array,
+  at: number,
+  gRe: number,
+  gIm: number,
+  attenuationNp: number,
+  phaseRad: number,
+): void {
+  const one = Math.exp(-attenuationNp);
+  const pRe = one * Math.cos(phaseRad);
+  const pIm = -one * Math.sin(phaseRad);
+  const two = Math.exp(-2 * attenuationNp);
+  const p2Re = two * Math.cos(2 * phaseRad);
+  const p2Im = -two * Math.sin(2 * phaseRad);
+  const g2Re = gRe * gRe - gIm * gIm;
+  const g2Im = 2 * gRe * gIm;
+  const dRe = 1 - (g2Re * p2Re - g2Im * p2Im);
+  const dIm = -(g2Re * p2Im + g2Im * p2Re);
+  const size = dRe * dRe + dIm * dIm;
+  // 1 - P^2 loses digits for a short lossless line; sinh keeps them: 1 - P^2 = 2 P sinh(gamma l).
+  const shRe = Math.sinh(attenuationNp) * Math.cos(phaseRad);
+  const shIm = Math.cosh(attenuationNp) * Math.sin(phaseRad);
+  const nRe = attenuationNp > 20 ? 1 - p2Re : 2 * (pRe * shRe - pIm * shIm);
+  const nIm = attenuationNp > 20 ? -p2Im : 2 * (pRe * shIm + pIm * shRe);
+  const rRe = gRe * nRe - gIm * nIm;
+  const rIm = gRe * nIm + gIm * nRe;
+  const tRe = pRe * (1 - g2Re) + pIm * g2Im;
+  const tIm = pIm * (1 - g2Re) - pRe * g2Im;
+  writeSymmetric(
+    out,
+    at,
+    (rRe * dRe + rIm * dIm) / size,
+    (rIm * dRe - rRe * dIm) / size,
+    (tRe * dRe + tIm * dIm) / size,
+    (tIm * dRe - tRe * dIm) / size,
+  );
+}
+
+/** A reciprocal, symmetric two-port. */
+export function writeSymmetric(
+  out: Float64Array,
+  at: number,
+  rRe: number,
+  rIm: number,
+  tRe: number,
+  tIm: number,
+): void {
+  out[at] = rRe;
+  out[at + 1] = rIm;
+  out[at + 2] = tRe;
+  out[at + 3] = tIm;
+  out[at + 4] = tRe;
+  out[at + 5] = tIm;
+  out[at + 6] = rRe;
+  out[at + 7] = rIm;
+}
+
+/**
+ * What a line closed at its far end shows: with the load's reflection in the line's own impedance turned back by two passes,
+ * G = G_L e^(-2 gamma l), Z = Zc (1 + G)/(1 - G). Given as Z or as Y, whichever is the smaller number, so that a quarter-wave
+ * open is exactly a short and a half-wave short too.
+ */
+export function stubAt(
+  line: LossyLine,
+  frequencyHz: number,
+  loadRe: number,
+  loadIm: number,
+  out: BranchValue,
+): void {
+  const two = Math.exp((-2 * lineLossDb(line, frequencyHz)) / dbPerNeper);
+  const angle = -2 * linePhaseRad(line, frequencyHz);
+  const pRe = two * Math.cos(angle);
+  const pIm = two * Math.sin(angle);
+  const gRe = loadRe * pRe - loadIm * pIm;
+  const gIm = loadRe * pIm + loadIm * pRe;
+  const asAdmittance = gRe > 0;
+  // Y = (1 - G)/(1 + G)/Zc where G points to an open, Z = Zc (1 + G)/(1 - G) where it points to a short.
+  const sign = asAdmittance ? 1 : -1;
+  const scale = asAdmittance ? 1 / line.z0Ohm : line.z0Ohm;
+  const dRe = 1 + sign * gRe;
+  const dIm = sign * gIm;
+  const size = dRe * dRe + dIm * dIm;
+  const re = ((1 - sign * gRe) * dRe - sign * gIm * dIm) / size;
+  const im = (-sign * gIm * dRe - (1 - sign * gRe) * dIm) / size;
+  setValue(out, asAdmittance, Math.max(re, 0) * scale, im * scale);
+}
