@@ -34,7 +34,7 @@ function limitLine(limit: LimitView): string {
   const head = `${limit.title} (${limit.quantity}): ${wordsOf(limit.verdict)}${status}`;
   const { worstRefined } = limit;
   const margin =
-    worstRefined?.marginDb == null
+    worstRefined === null || worstRefined.marginDb === null
       ? ''
       : `worst margin ${marginWords(limit, worstRefined.marginDb)} at ${ghz(worstRefined.frequencyHz)}`;
   if (limit.verdict !== 'not-judged') return margin ? `${head}, ${margin}.` : `${head}.`;
@@ -50,7 +50,7 @@ function ledgerLine({ atHz, totalDb, reflectionDb, rows, reserveDb }: Ledger): s
   const tolls = rows.some(({ tollDb }) => tollDb === null)
     ? null
     : rows.reduce((sum, { tollDb }) => sum + (tollDb ?? 0), 0);
-  const reserve = reserveDb == null ? '' : `; reserve ${fixed(reserveDb)} dB`;
+  const reserve = reserveDb === undefined || reserveDb === null ? '' : `; reserve ${fixed(reserveDb)} dB`;
   return `At ${ghz(atHz)}: insertion loss ${decibels(totalDb)} = tolls ${decibels(tolls)} + reflection ${decibels(reflectionDb)}${reserve}.`;
 }
 
