@@ -1,0 +1,73 @@
+import type { ChannelElement, ElementOf } from '@tollgate/contracts';
+import { cascade2Into, cascade4Into } from '@tollgate/network';
+import { pairOfLegs } from './legs';
+import { isPair, pairPort } from './pair';
+import { buildPart, partCoverage, partKey } from './part';
+import { isTwoPort, twoPort } from './two-port';
+import { ElementError, type BuildContext, type BuiltElement, type ElementCoverage } from './types';
+
+/** Files an element needs, each with the path inside the element that names it. */
+export function elementFiles(element: ChannelElement): { key: string; path: string }[] {
+  if (element.kind !== 'touchstone' && element.kind !== 'connector') return [];
+  if (element.kind === 'connector' && element.circuit) return [];
+  const key = partKey(element);
+  return key === undefined ? [] : [{ key, path: element.file !== undefined ? 'file' : 'fileId' }];
+}
+
+/**
+ * Bands in which the element can answer; empty where it answers everywhere.
+ * @throws ElementError where the part contradicts the element: port count, port order, references without a wave definition
+ */
+export function elementCoverage(element: ChannelElement, context: BuildContext): ElementCoverage[] {
+  if (element.kind === 'touchstone' || (element.kind === 'connector' && !element.circuit))
+    return [partCoverage(element, context)];
+  return [];
+}
+
+/**
+ * Scattering parameters of an element at the joint reference: 2 ports, or 4 in a differential channel, where a kind that is a
+ * two-port stands once in each leg.
+ * @param frequenciesHz ascending, inside the element's coverage; 0 Hz is allowed
+ * @throws ElementError
+ */
+export function buildElement(
+  element: ChannelElement,
+  frequenciesHz: Float64Array,
+  context: BuildContext,
+): BuiltElement {
+  if (element.kind === 'touchstone') return buildPart(element, frequenciesHz, context);
+  if (element.kind === 'connector') {
+    return element.circuit
+      ? buildCircuit(element.circuit, frequenciesHz, context)
+      : buildPart(element, frequenciesHz, context);
+  }
+  return { s: circuitKind(element, frequenciesHz, context), warnings: [] };
+}
+
+function circuitKind(
+  element: ChannelElement,
+  frequenciesHz: Float64Array,
+  { signaling, jointOhm }: BuildContext,
+): Float64Array {
+  if (isPair(element)) return pairPort(element, frequenciesHz, jointOhm);
+  if (isTwoPort(element)) {
+    const leg = twoPort(element, frequenciesHz, jointOhm);
+    return signaling === 'differential' ? pairOfLegs(leg, leg, frequenciesHz.length) : leg;
+  }
+  throw new ElementError({
+    path: 'kind',
+    message: `${element.kind} is not computed by this engine yet.`,
+    mend: 'Describe it by a circuit kind.',
+  });
+}
+
+function buildCircuit(
+  circuit: NonNullable<ElementOf<'connector'>['circuit']>,
+  frequenciesHz: Float64Array,
+  context: BuildContext,
+): BuiltElement {
+  const cascadeInto = context.signaling === 'differential' ? cascade4Into : cascade2Into;
+  const [first, ...rest] = circuit.map((part) => circuitKind(part, frequenciesHz, context));
+  for (const next of rest) cascadeInto(first!, first!, next, frequenciesHz.length);
+  return { s: first!, warnings: [] };
+}

@@ -1,0 +1,12 @@
+export { buildElement, elementCoverage, elementFiles } from './element';
+export { elementDelayS, elementTollDb } from './loss';
+export { elementProblems } from './problems';
+export { elementStanding } from './standing';
+export {
+  ElementError,
+  type BuildContext,
+  type BuiltElement,
+  type ElementCoverage,
+  type ElementPart,
+  type ElementProblem,
+} from './types';
