@@ -124,9 +124,12 @@ function gapWarnings(gridHz: Float64Array, coverage: readonly Coverage[]): Warni
     }));
 }
 
-function linesOf(channel: CompleteChannel, sections: readonly BuiltElement[]): ChannelResponse['lines'] {
+type Line = ChannelResponse['lines'][number];
+
+/** Traces say what their line is like; other elements have nothing to say. */
+function linesOf(channel: CompleteChannel, sections: readonly BuiltElement[]): Line[] {
   return channel.elements.flatMap((element, i) => {
-    const line = sections[i]!.line;
+    const { line } = sections[i]! as BuiltElement & { readonly line?: Pick<Line, 'modes'> };
     return line ? [{ element: element.id, modes: line.modes }] : [];
   });
 }
