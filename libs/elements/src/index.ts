@@ -9,4 +9,5 @@ export {
   type ElementCoverage,
   type ElementPart,
   type ElementProblem,
+  type LineFacts,
 } from './types';

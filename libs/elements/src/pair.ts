@@ -59,7 +59,7 @@ export function pairPort(
   frequenciesHz: Float64Array,
   referenceOhm: number,
 ): Float64Array {
-  return (builders[element.kind] as Builder<never>)(element as never, frequenciesHz, referenceOhm);
+  return (builders[element.kind] as unknown as Builder<PairKind>)(element, frequenciesHz, referenceOhm);
 }
 
 /** Even and odd mode of a coupled line as lines of one conductor. */

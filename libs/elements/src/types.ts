@@ -1,4 +1,4 @@
-import type { Signaling, Stackup } from '@tollgate/contracts';
+import type { ChannelResponse, Signaling, Stackup } from '@tollgate/contracts';
 import type { TouchstoneFile } from '@tollgate/touchstone';
 
 /** A measured or supplied part with the hash of its bytes; found by the element's `file` or `fileId`. */
@@ -37,12 +37,17 @@ export interface ElementCoverage {
   readonly what: string;
 }
 
+/** Modes of a trace as the response's `lines` tell them. */
+export type LineFacts = ChannelResponse['lines'][number]['modes'];
+
 export interface BuiltElement {
   /** Point-major scattering parameters at `jointOhm`. */
   readonly s: Float64Array;
   readonly warnings: readonly string[];
   /** Touchstone parts: the largest estimate of what interpolation added, on these frequencies. */
   readonly interpolationErrorAbs?: number;
+  /** Traces only. */
+  readonly line?: LineFacts;
   /** The range that was carried on below the part's band. */
   readonly extendedHz?: readonly [number, number];
 }
