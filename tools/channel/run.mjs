@@ -37,7 +37,6 @@ async function bundle(target) {
     target: 'node20',
     format: 'cjs',
     minify: true,
-    keepNames: true,
     tsconfig: join(root, 'tsconfig.base.json'),
     logLevel: 'warning',
   });
