@@ -11,10 +11,18 @@ export function cautionsOf(
   return [...ofParts(sections), ...ofStackup(channel), ...ofEvaluation(channel, coverage)];
 }
 
+/** Below this an interpolated S is as good as the file's own. */
+const noticeableError = 1e-6;
+
 function ofParts(sections: readonly BuiltElement[]): Warning[] {
-  return sections.flatMap(({ warnings }, i) =>
-    warnings.map((message) => ({ path: `elements[${i}]`, message })),
-  );
+  return sections.flatMap(({ warnings, interpolationErrorAbs }, i) => {
+    const messages = [...warnings];
+    if (interpolationErrorAbs !== undefined && interpolationErrorAbs > noticeableError) {
+      const error = Number(interpolationErrorAbs.toPrecision(2));
+      messages.push(`Interpolated between the file's points: its S may be off by about ${error}.`);
+    }
+    return messages.map((message) => ({ path: `elements[${i}]`, message }));
+  });
 }
 
 function ofStackup({ stackup, elements }: CompleteChannel): Warning[] {
