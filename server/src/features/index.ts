@@ -85,7 +85,7 @@ export function createFeatures(config: Config, clock: Clock, sequelize: Sequeliz
   handlers.set('sweep', async () => {
     const now = clock.now();
     await store.sweep(new Date(now.getTime() - dayMs));
-    await sweepSessions(sequelize, now);
+    await sweepSessions(sequelize);
     await throttle.sweep();
     await checks.sweep(new Date(now.getTime() - dayMs));
     await jobs.sweep(new Date(now.getTime() - 7 * dayMs));

@@ -58,11 +58,14 @@ export class CheckPool {
 }
 
 /** Bundled, the worker lies beside main; from source it is run through tsx. */
-function workerFile(): { filename: string; execArgv?: string[] } {
+function workerFile(): { filename: string; execArgv?: string[]; env?: Record<string, string> } {
   const bundled = fileURLToPath(new URL('./check.worker.mjs', import.meta.url));
   if (existsSync(bundled)) return { filename: bundled };
+  // tsx finds the libraries' aliases in the base configuration only.
+  const TSX_TSCONFIG_PATH = fileURLToPath(new URL('../../../../tsconfig.base.json', import.meta.url));
   return {
     filename: fileURLToPath(new URL('./check.worker.ts', import.meta.url)),
     execArgv: ['--import', 'tsx'],
+    env: { ...(process.env as Record<string, string>), TSX_TSCONFIG_PATH },
   };
 }

@@ -34,9 +34,9 @@ export function sessionRoutes({ config, clock, people, passport, throttle }: Nee
   function signIn(request: Request, response: Response): Promise<Caller> {
     return new Promise((resolve, reject) => {
       const answered = (error: unknown, person: Caller | false | undefined) => {
-        if (error) return reject(error);
+        if (error) return reject(asError(error));
         if (!person) return reject(problems.wrongCredentials());
-        request.logIn(person, (failure: unknown) => (failure ? reject(failure) : resolve(person)));
+        request.logIn(person, (failure: unknown) => (failure ? reject(asError(failure)) : resolve(person)));
       };
       (
         passport.authenticate('local', answered) as (
@@ -44,7 +44,7 @@ export function sessionRoutes({ config, clock, people, passport, throttle }: Nee
           response: Response,
           next: (error?: unknown) => void,
         ) => void
-      )(request, response, (error) => reject(error));
+      )(request, response, (error) => reject(asError(error)));
     });
   }
 
@@ -79,7 +79,7 @@ export function sessionRoutes({ config, clock, people, passport, throttle }: Nee
       summary: 'Sign out',
       handle: ({ request, response }) =>
         new Promise<void>((resolve, reject) => {
-          request.session.destroy((error: unknown) => (error ? reject(error) : resolve()));
+          request.session.destroy((error: unknown) => (error ? reject(asError(error)) : resolve()));
           response.clearCookie(config.cookieName);
         }),
     }),
@@ -101,6 +101,10 @@ export function sessionRoutes({ config, clock, people, passport, throttle }: Nee
     }),
     ...linkRoutes({ people, throttle }),
   ];
+}
+
+function asError(error: unknown): Error {
+  return error instanceof Error ? error : new Error(String(error));
 }
 
 /** What a person without a session may do with a link, or to get one. */

@@ -79,7 +79,7 @@ export async function endSessions(
   });
 }
 
-/** Removes sessions that have run out; the sweep job calls it. */
-export async function sweepSessions(sequelize: Sequelize, now: Date): Promise<void> {
-  await sequelize.models['sessions']!.destroy({ where: { expires: { [Op.lt]: now } } });
+/** Removes sessions that have run out; by the machine's clock, which is the one their cookies go by. */
+export async function sweepSessions(sequelize: Sequelize): Promise<void> {
+  await sequelize.models['sessions']!.destroy({ where: { expires: { [Op.lt]: new Date() } } });
 }
