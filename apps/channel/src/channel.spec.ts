@@ -27,7 +27,7 @@ interface Run {
 
 /** Runs the command line as a process of its own, with a person standing in `folder`. */
 function channel(...words: string[]): Run {
-  const env = { ...process.env, INIT_CWD: folder, TOLLGATE_BUILD: join(root, 'dist') };
+  const env = { ...process.env, INIT_CWD: folder, TOLLGATE_BUILD: join(folder, 'build') };
   const { status, stdout, stderr } = spawnSync(
     process.execPath,
     [join(root, 'tools/channel/run.mjs'), ...words],
@@ -148,6 +148,19 @@ describe('the command line', () => {
     const run = channel(write('bad.json', { elements: [{ kind: 'touchstone', file: 'bad.s2p' }] }));
     expect(run.code).toBe(2);
     expect(run.errors).toContain('bad.s2p, line 3');
+  });
+});
+
+describe('the bundle of the command line', () => {
+  it('is made once and kept while the sources stay as they are', () => {
+    const file = write('holds.json', limited(3));
+    channel(file);
+    const bundles = (): string[] => readdirSync(join(folder, 'build/channel'));
+    const [first] = bundles();
+    const made = statSync(join(folder, 'build/channel', first!)).mtimeMs;
+    expect(channel(file).code).toBe(0);
+    expect(bundles()).toEqual([first]);
+    expect(statSync(join(folder, 'build/channel', first!)).mtimeMs).toBe(made);
   });
 });
 

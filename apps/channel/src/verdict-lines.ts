@@ -22,10 +22,10 @@ export function verdictLines(name: string, view: CheckView): string[] {
 
 function overall(view: CheckView): string {
   if (view.limits.length === 0) return 'no limit to judge.';
-  if (view.verdict !== 'holds') return `${wordsOf(view.verdict)}.`;
-  const statuses = new Set(view.limits.map(({ status }) => status ?? ''));
-  const [only] = statuses;
-  return `holds${statuses.size === 1 && only ? `, ${only} limit` : ''}.`;
+  const deciding = view.limits.filter(({ verdict }) => verdict === view.verdict);
+  const [status, ...others] = new Set(deciding.map((limit) => limit.status));
+  const told = status && others.length === 0 ? `, ${status} limit` : '';
+  return `${wordsOf(view.verdict)}${told}.`;
 }
 
 /** The verdict of a limit always carries its status: an informative limit that holds binds nobody. */

@@ -1,21 +1,21 @@
 import { evaluationHz, type CompleteChannel, type Warning } from '@tollgate/contracts';
-import type { BuiltElement } from '@tollgate/elements';
 import { commonBand, spokenHz, type Coverage } from '@tollgate/masks';
+import type { Evaluation } from './chain';
 
 /** What a person should know of a channel that was checked, beside its grid. */
 export function cautionsOf(
   channel: CompleteChannel,
-  sections: readonly BuiltElement[],
+  facts: Evaluation['facts'],
   coverage: readonly Coverage[],
 ): Warning[] {
-  return [...ofParts(sections), ...ofStackup(channel), ...ofEvaluation(channel, coverage)];
+  return [...ofParts(facts), ...ofStackup(channel), ...ofEvaluation(channel, coverage)];
 }
 
 /** Below this an interpolated S is as good as the file's own. */
 const noticeableError = 1e-6;
 
-function ofParts(sections: readonly BuiltElement[]): Warning[] {
-  return sections.flatMap(({ warnings, interpolationErrorAbs }, i) => {
+function ofParts(facts: Evaluation['facts']): Warning[] {
+  return facts.flatMap(({ warnings, interpolationErrorAbs }, i) => {
     const messages = [...warnings];
     if (interpolationErrorAbs !== undefined && interpolationErrorAbs > noticeableError) {
       const error = Number(interpolationErrorAbs.toPrecision(2));

@@ -8,9 +8,10 @@ import {
 } from '@tollgate/elements';
 import type { Coverage } from '@tollgate/masks';
 import {
-  cascadeAll,
+  cascadeInto,
   renormalize,
   sameReference,
+  through,
   tollDb,
   toMixedModeInto,
   uniformReference,
@@ -66,22 +67,22 @@ export function createChain(
   return { channel, context, ports, sectionPorts, reference, sectionReference, coverage, cache };
 }
 
-/** Every element on these frequencies (ascending, inside the coverage), from the cache where `cached` asks for it. */
-export function buildSections(chain: Chain, frequenciesHz: Float64Array, cached: boolean): BuiltElement[] {
-  const { channel, context, cache } = chain;
-  const build = (element: ChannelElement, i: number): BuiltElement =>
-    ofElement(i, () => buildElement(element, frequenciesHz, context));
-  if (!cache || !cached) return channel.elements.map(build);
-  const shared = `${cache.gridKey(frequenciesHz)} ${context.jointOhm} ${context.signaling}`;
-  const stackup = canonicalize(channel.stackup ?? null) ?? '';
-  return channel.elements.map((element, i) => {
-    const key = `${shared} ${keyOf(element, context, stackup)}`;
-    const known = cache.get(key);
-    if (known) return known;
-    const built = build(element, i);
-    cache.set(key, built);
-    return built;
-  });
+/** Every element on these frequencies (ascending, inside the coverage), one after the other; `cached` uses the cache. */
+export function* sectionsOf(
+  chain: Chain,
+  frequenciesHz: Float64Array,
+  cached: boolean,
+): Generator<BuiltElement, void> {
+  const { channel, context } = chain;
+  const cache = cached ? chain.cache : undefined;
+  const shared = cache ? `${cache.gridKey(frequenciesHz)} ${context.jointOhm} ${context.signaling}` : '';
+  const stackup = cache ? (canonicalize(channel.stackup ?? null) ?? '') : '';
+  for (const [i, element] of channel.elements.entries()) {
+    const key = cache ? `${shared} ${keyOf(element, context, stackup)}` : '';
+    const built = cache?.get(key) ?? ofElement(i, () => buildElement(element, frequenciesHz, context));
+    cache?.set(key, built);
+    yield built;
+  }
 }
 
 /** What an element's S depends on; how it is named, trusted or placed does not enter. */
@@ -96,15 +97,30 @@ function keyOf(element: ChannelElement, { parts }: BuildContext, stackup: string
   return `${canonicalize(model)} ${part} ${onStackup ? stackup : ''}`;
 }
 
-/** The sections in a row, at the channel's references and with the channel's ports. */
-export function cascadeSections(
-  chain: Chain,
-  sections: readonly Float64Array[],
-  frequenciesHz: Float64Array,
-): Network {
-  const s = cascadeAll(sections, chain.sectionPorts, frequenciesHz.length);
-  const network = atReference(chain, s, frequenciesHz, chain.sectionReference);
-  return chain.ports === chain.sectionPorts ? network : bothLegs(network, chain.reference);
+/** A channel on some frequencies, and what its elements had to say beside their S. */
+export interface Evaluation {
+  readonly network: Network;
+  readonly facts: readonly Omit<BuiltElement, 's'>[];
+  /** Points at which a joint traps a wave without loss. */
+  readonly trappedPoints: number;
+}
+
+/**
+ * The elements in a row, at the channel's references and with its ports. One section is held at a time: a channel of 500
+ * elements on the largest grid would fill gigabytes.
+ */
+export function evaluateChain(chain: Chain, frequenciesHz: Float64Array, cached: boolean): Evaluation {
+  const points = frequenciesHz.length;
+  const s = through(chain.sectionPorts, points);
+  const facts: Omit<BuiltElement, 's'>[] = [];
+  let trappedPoints = 0;
+  for (const { s: section, ...fact } of sectionsOf(chain, frequenciesHz, cached)) {
+    trappedPoints += cascadeInto(s, s, section, chain.sectionPorts, points);
+    facts.push(fact);
+  }
+  const sections = atReference(chain, s, frequenciesHz, chain.sectionReference);
+  const network = chain.ports === chain.sectionPorts ? sections : bothLegs(sections, chain.reference);
+  return { network, facts, trappedPoints };
 }
 
 /** A cascade of sections, renormalised once from the joint to `reference`. */
@@ -132,12 +148,6 @@ function bothLegs(leg: Network, referenceOhm: Float64Array): Network {
     }
   }
   return { ports: 4, frequenciesHz: leg.frequenciesHz, s, referenceOhm };
-}
-
-/** The channel at a few frequencies that its limits or ledgers ask for. */
-export function evaluateChain(chain: Chain, frequenciesHz: Float64Array, cached: boolean): Network {
-  const sections = buildSections(chain, frequenciesHz, cached).map(({ s }) => s);
-  return cascadeSections(chain, sections, frequenciesHz);
 }
 
 /**

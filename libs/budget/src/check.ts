@@ -1,10 +1,10 @@
 import type { ChannelResponse, CompleteChannel, FieldProblem, Warning } from '@tollgate/contracts';
-import { elementDelayS, elementStanding, type BuiltElement } from '@tollgate/elements';
+import { elementDelayS, elementStanding } from '@tollgate/elements';
 import { commonBand, compileMask, judgeLimit, spokenHz, type Coverage, type Subject } from '@tollgate/masks';
 import { NetworkError, toMixedMode, type Network } from '@tollgate/network';
 import type { CheckCache } from './cache';
 import { cautionsOf } from './cautions';
-import { buildSections, cascadeSections, createChain, evaluateChain, type Chain } from './chain';
+import { createChain, evaluateChain, type Chain, type Evaluation } from './chain';
 import type { Check, CheckResult, JudgedLimit, Part } from './check.types';
 import { gridOf } from './grid';
 import { ledgersOf } from './ledger';
@@ -57,12 +57,7 @@ function checked(chain: Chain): Check {
   );
   const grid = gridOf(channel, delayS);
   const covered = grid.frequenciesHz.filter((f) => f >= band[0] && f <= band[1]);
-  const sections = buildSections(chain, covered, true);
-  const network = cascadeSections(
-    chain,
-    sections.map(({ s }) => s),
-    covered,
-  );
+  const { network, facts, trappedPoints } = evaluateChain(chain, covered, true);
   const limits = judgeAll(chain, network, grid.frequenciesHz);
   return {
     channel,
@@ -70,7 +65,7 @@ function checked(chain: Chain): Check {
     ...(network.ports === 4 ? { mixedMode: toMixedMode(network) } : {}),
     limits,
     ledger: ledgersOf(chain, limits, delayS),
-    lines: linesOf(channel, sections),
+    lines: linesOf(channel, facts),
     standings: channel.elements.map((element) => ({
       element: element.id,
       ...elementStanding(element, channel.stackup),
@@ -78,7 +73,8 @@ function checked(chain: Chain): Check {
     warnings: [
       ...grid.warnings,
       ...gapWarnings(grid.frequenciesHz, coverage),
-      ...cautionsOf(channel, sections, coverage),
+      ...cautionsOf(channel, facts, coverage),
+      ...trappedWarning(trappedPoints),
     ],
     delayS,
   };
@@ -93,7 +89,8 @@ function judgeAll(chain: Chain, network: Network, gridHz: Float64Array): JudgedL
     gridHz: [gridHz[0]!, gridHz.at(-1)!],
     grid: network,
     parts: chain.coverage,
-    evaluate: (frequenciesHz) => evaluateChain(chain, frequenciesHz, frequenciesHz.length >= worthKeeping),
+    evaluate: (frequenciesHz) =>
+      evaluateChain(chain, frequenciesHz, frequenciesHz.length >= worthKeeping).network,
   };
   return channel.limits.map((limit, i) => {
     const compiled = compileMask(limit, `limits[${i}]`);
@@ -124,12 +121,18 @@ function gapWarnings(gridHz: Float64Array, coverage: readonly Coverage[]): Warni
     }));
 }
 
+function trappedWarning(points: number): Warning[] {
+  if (points === 0) return [];
+  const message = `Between two elements a wave is trapped without loss at ${points} points; it is taken as not there.`;
+  return [{ path: 'elements', message }];
+}
+
 type Line = ChannelResponse['lines'][number];
 
 /** Traces say what their line is like; other elements have nothing to say. */
-function linesOf(channel: CompleteChannel, sections: readonly BuiltElement[]): Line[] {
+function linesOf(channel: CompleteChannel, facts: Evaluation['facts']): Line[] {
   return channel.elements.flatMap((element, i) => {
-    const { line } = sections[i]! as BuiltElement & { readonly line?: Pick<Line, 'modes'> };
+    const { line } = facts[i]! as { readonly line?: Pick<Line, 'modes'> };
     return line ? [{ element: element.id, modes: line.modes }] : [];
   });
 }

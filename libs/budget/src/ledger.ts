@@ -1,7 +1,7 @@
 import { evaluationHz, type Ledger, type LedgerRow } from '@tollgate/contracts';
 import { commonBand, limitAt } from '@tollgate/masks';
 import { leaveOneOutInto, lossDb, prefixCascades, suffixCascades, uniformReference } from '@tollgate/network';
-import { atReference, buildSections, tollOfSection, type Chain } from './chain';
+import { atReference, sectionsOf, tollOfSection, type Chain } from './chain';
 import type { JudgedLimit } from './check.types';
 
 /** Points at which `saved if ideal` is looked at around a ledger's frequency. */
@@ -122,7 +122,7 @@ interface Losses {
 function lossesAround(chain: Chain, frequenciesHz: Float64Array, reference: Float64Array): Losses {
   const points = frequenciesHz.length;
   const ports = chain.sectionPorts;
-  const sections = buildSections(chain, frequenciesHz, false).map(({ s }) => s);
+  const sections = Array.from(sectionsOf(chain, frequenciesHz, false), ({ s }) => s);
   const prefixes = prefixCascades(sections, ports, points);
   const suffixes = suffixCascades(sections, ports, points);
   const left = new Float64Array(points * ports * ports * 2);
