@@ -3,13 +3,18 @@ import {
   existsSync,
   mkdirSync,
   mkdtempSync,
+  readdirSync,
   readFileSync,
   rmSync,
+  statSync,
   symlinkSync,
   writeFileSync,
 } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join, resolve } from 'node:path';
+
+// Every run is a process of its own, and the first one bundles.
+jest.setTimeout(60_000);
 
 const root = resolve(__dirname, '../../..');
 let folder: string;
