@@ -37,7 +37,7 @@ const nodeBuiltIns = {
 };
 
 export default tseslint.config(
-  { ignores: ['node_modules/**', 'dist/**', '.angular/**', '.data*/**', 'coverage/**'] },
+  { ignores: ['node_modules/**', 'dist/**', 'dist-test/**', '.angular/**', '.data*/**', 'coverage/**'] },
   {
     files: ['**/*.ts'],
     extends: [...tseslint.configs.recommendedTypeChecked],

@@ -1,3 +1,4 @@
+/* eslint-disable @typescript-eslint/no-explicit-any -- a spec looks into replies of any shape; what they are is what it tests */
 /** A caller of the API over real HTTP: keeps its cookie, carries the session's token, and tells what came back. */
 export interface Reply<Body = unknown> {
   readonly status: number;

@@ -120,5 +120,5 @@ export function renameParts(
     const { file: _file, fileId: _fileId, ...rest } = element;
     return { ...rest, ...named };
   });
-  return { ...channel, elements: elements as CompleteChannel['elements'] };
+  return { ...channel, elements: elements };
 }

@@ -1,0 +1,123 @@
+import { spawn } from 'node:child_process';
+import { existsSync, mkdtempSync, readFileSync, rmSync } from 'node:fs';
+import { tmpdir } from 'node:os';
+import { dirname, join, resolve } from 'node:path';
+import { fileURLToPath } from 'node:url';
+import { ensureMariadb, installPackages, startDatabase } from '../database/mariadb.mjs';
+import { checkNode, ensurePackages } from '../start/packages.mjs';
+
+/** `npm test`: brings what the tests need, runs everything, and ends with one plain line. */
+
+const root = join(dirname(fileURLToPath(import.meta.url)), '../..');
+const out = resolve(root, 'dist-test');
+const work = mkdtempSync(join(tmpdir(), 'tg-test-'));
+const totals = { passed: 0, failed: 0 };
+const failures = [];
+
+function run(command, args, env = {}) {
+  return new Promise((done) => {
+    const child = spawn(command, args, {
+      cwd: root,
+      env: { ...process.env, ...env },
+      stdio: ['ignore', 'pipe', 'pipe'],
+    });
+    let text = '';
+    child.stdout.on('data', (part) => (text += part));
+    child.stderr.on('data', (part) => (text += part));
+    child.on('close', (code) => done({ code, text }));
+  });
+}
+
+function bin(name) {
+  return join(root, 'node_modules/.bin', name);
+}
+
+/** A check that is a whole counts as one test. */
+async function whole(name, command, args) {
+  const started = Date.now();
+  const { code, text } = await run(command, args);
+  tally(name, code === 0 ? 1 : 0, code === 0 ? 0 : 1, started);
+  if (code !== 0) failures.push(`${name}\n${text.slice(-6000)}`);
+}
+
+function tally(name, passed, failed, started) {
+  totals.passed += passed;
+  totals.failed += failed;
+  console.log(
+    `${failed ? 'FAILED' : 'passed'}  ${name}  (${passed} passed, ${failed} failed, ${Math.round((Date.now() - started) / 1000)} s)`,
+  );
+}
+
+async function jest(name, config, args, env) {
+  const started = Date.now();
+  const report = join(work, `${name}.json`);
+  const { code, text } = await run(
+    bin('jest'),
+    ['--config', config, '--json', `--outputFile=${report}`, '--silent', ...args],
+    env,
+  );
+  if (!existsSync(report)) {
+    tally(name, 0, 1, started);
+    failures.push(`${name} did not run\n${text.slice(-6000)}`);
+    return;
+  }
+  const result = JSON.parse(readFileSync(report, 'utf8'));
+  const broken = result.testResults.filter(
+    (file) => file.assertionResults.length === 0 && file.status === 'failed',
+  );
+  tally(name, result.numPassedTests, result.numFailedTests + broken.length, started);
+  for (const file of result.testResults) {
+    if (broken.includes(file)) failures.push(`${file.name}\n${file.message.slice(0, 3000)}`);
+    for (const test of file.assertionResults) {
+      if (test.status === 'failed')
+        failures.push(`${test.fullName}\n${test.failureMessages.join('\n').slice(0, 3000)}`);
+    }
+  }
+  if (code !== 0 && result.numFailedTests + broken.length === 0)
+    failures.push(`${name} ended with ${code}\n${text.slice(-3000)}`);
+}
+
+async function main() {
+  checkNode();
+  ensurePackages(root);
+  ensureMariadb();
+  if (!existsSync('/usr/bin/chromium')) installPackages(['chromium'], 'Chromium');
+
+  const database = await startDatabase(join(work, 'mariadb'));
+  try {
+    const node = process.execPath;
+    await Promise.all([
+      (async () => {
+        await whole('lint', bin('eslint'), ['.', '--max-warnings', '0']);
+        await whole('format', bin('prettier'), ['--check', '.']);
+      })(),
+      (async () => {
+        await whole('types of the libraries', bin('tsc'), ['-p', 'tsconfig.libs.json', '--noEmit']);
+        await whole('types of server, tools and tests', bin('tsc'), ['-p', 'tsconfig.node.json', '--noEmit']);
+        await whole('types of the client', bin('tsc'), ['-p', 'apps/web/tsconfig.app.json', '--noEmit']);
+        await whole("types of the client's specs", bin('tsc'), [
+          '-p',
+          'apps/web/tsconfig.spec.json',
+          '--noEmit',
+        ]);
+      })(),
+    ]);
+    const env = { TOLLGATE_TEST_DB: JSON.stringify(database.access), TOLLGATE_BUILD: out };
+    await whole('build', node, [join(root, 'tools/build/build.mjs'), '--out', 'dist-test']);
+    await jest('units and API', 'jest.config.mjs', ['--maxWorkers=2'], env);
+    if (existsSync(join(root, 'test/journeys/jest.config.mjs')))
+      await jest('journeys', 'test/journeys/jest.config.mjs', ['--runInBand'], env);
+  } finally {
+    await database.stop();
+    rmSync(work, { recursive: true, force: true });
+  }
+  for (const failure of failures) console.log(`\n--- ${failure}`);
+  console.log(`${totals.passed} passed, ${totals.failed} failed`);
+  process.exit(totals.failed > 0 || failures.length > 0 || totals.passed === 0 ? 1 : 0);
+}
+
+main().catch((error) => {
+  console.error(error.message);
+  console.log(`${totals.passed} passed, ${totals.failed + 1} failed`);
+  process.exit(1);
+});
