@@ -10,16 +10,25 @@ export interface BranchValue {
   im: number;
 }
 
-/** R, L and C in series at one frequency: Z = R + j w L + 1/(j w C); a capacitor at 0 Hz is an open. */
+/**
+ * R, L and C in series at one frequency: Z = R + j w L + 1/(j w C). With u = 1 - w^2 L C + j w R C, Y = j w C/u and
+ * Z = u/(j w C): Y where u is not near 0, so that a capacitor is exactly an open at 0 Hz and finite close to it, Z near
+ * resonance.
+ */
 export function branchAt(branch: Branch, frequencyHz: number, out: BranchValue): void {
   const w = 2 * Math.PI * frequencyHz;
-  if (branch.capacitanceF !== undefined && w === 0) {
-    setValue(out, true, 0, 0);
+  const resistance = branch.resistanceOhm ?? 0;
+  const reactance = w * (branch.inductanceH ?? 0);
+  if (branch.capacitanceF === undefined) {
+    setValue(out, false, resistance, reactance);
     return;
   }
-  const reactance =
-    w * (branch.inductanceH ?? 0) - (branch.capacitanceF === undefined ? 0 : 1 / (w * branch.capacitanceF));
-  setValue(out, false, branch.resistanceOhm ?? 0, reactance);
+  const susceptance = w * branch.capacitanceF;
+  const uRe = 1 - susceptance * reactance;
+  const uIm = susceptance * resistance;
+  const size = uRe * uRe + uIm * uIm;
+  if (size > 0.25) setValue(out, true, (susceptance * uIm) / size, (susceptance * uRe) / size);
+  else setValue(out, false, resistance, -uRe / susceptance);
 }
 
 export function setValue(out: BranchValue, isAdmittance: boolean, re: number, im: number): void {

@@ -4,9 +4,12 @@ import { passInto, writeSymmetric } from './line';
 
 const root = new Float64Array(2);
 
+/** Below this |gamma l|^2 a line is short: cosh and sinh by their series, good to the last digit with four terms. */
+const shortSquare = 1e-3;
+
 /**
  * A uniform line by its constants per length: gamma = sqrt((R + jwL)(G + jwC)), Zc = sqrt((R + jwL)/(G + jwC)) (Pozar 2.5, 2.7).
- * Where the shunt admittance is 0 (0 Hz without G) the line is its series resistance.
+ * A short line needs neither, and is finite down to 0 Hz, where Zc is none or 0/0.
  */
 export function rlgcInto(
   out: Float64Array,
@@ -20,14 +23,11 @@ export function rlgcInto(
   const zIm = w * line.inductanceHPerM;
   const yRe = line.conductanceSPerM;
   const yIm = w * line.capacitanceFPerM;
-  if (yRe === 0 && yIm === 0) {
-    const q = (zRe * line.lengthM) / (2 * referenceOhm);
-    writeSymmetric(out, at, q / (1 + q), 0, 1 / (1 + q), 0);
-    return;
-  }
-  if (zRe === 0 && zIm === 0) {
-    const q = (yRe * line.lengthM * referenceOhm) / 2;
-    writeSymmetric(out, at, -q / (1 + q), 0, 1 / (1 + q), 0);
+  const square = line.lengthM * line.lengthM;
+  const gRe2 = (zRe * yRe - zIm * yIm) * square;
+  const gIm2 = (zRe * yIm + zIm * yRe) * square;
+  if (Math.hypot(gRe2, gIm2) < shortSquare) {
+    shortInto(out, at, [zRe, zIm, yRe, yIm], line.lengthM, referenceOhm, gRe2, gIm2);
     return;
   }
   complexSqrt(root, 0, zRe * yRe - zIm * yIm, zRe * yIm + zIm * yRe);
@@ -42,4 +42,46 @@ export function rlgcInto(
   const gRe = ((zcRe - referenceOhm) * sumRe + zcIm * zcIm) / sum;
   const gIm = (zcIm * sumRe - (zcRe - referenceOhm) * zcIm) / sum;
   passInto(out, at, gRe, gIm, gammaRe * line.lengthM, gammaIm * line.lengthM);
+}
+
+/** With g = (gamma l)^2: A = cosh, B = z l sinh(gamma l)/(gamma l), C = y l sinh(gamma l)/(gamma l); S from ABCD (Frickey, 1994). */
+function shortInto(
+  out: Float64Array,
+  at: number,
+  [zRe, zIm, yRe, yIm]: readonly [number, number, number, number],
+  lengthM: number,
+  referenceOhm: number,
+  gRe: number,
+  gIm: number,
+): void {
+  const [aRe, aIm] = series(gRe, gIm, 1 / 2, 1 / 12, 1 / 30);
+  const [hRe, hIm] = series(gRe, gIm, 1 / 6, 1 / 20, 1 / 42);
+  const scale = lengthM / referenceOhm;
+  const back = lengthM * referenceOhm;
+  const bRe = (zRe * hRe - zIm * hIm) * scale;
+  const bIm = (zRe * hIm + zIm * hRe) * scale;
+  const cRe = (yRe * hRe - yIm * hIm) * back;
+  const cIm = (yRe * hIm + yIm * hRe) * back;
+  const dRe = 2 * aRe + bRe + cRe;
+  const dIm = 2 * aIm + bIm + cIm;
+  const size = dRe * dRe + dIm * dIm;
+  const rRe = bRe - cRe;
+  const rIm = bIm - cIm;
+  writeSymmetric(
+    out,
+    at,
+    (rRe * dRe + rIm * dIm) / size,
+    (rIm * dRe - rRe * dIm) / size,
+    (2 * dRe) / size,
+    (-2 * dIm) / size,
+  );
+}
+
+/** 1 + a g (1 + b g (1 + c g)), complex. */
+function series(gRe: number, gIm: number, a: number, b: number, c: number): [number, number] {
+  let [re, im] = [1, 0];
+  for (const factor of [c, b, a]) {
+    [re, im] = [1 + factor * (re * gRe - im * gIm), factor * (re * gIm + im * gRe)];
+  }
+  return [re, im];
 }
