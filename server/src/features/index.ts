@@ -87,6 +87,7 @@ export function createFeatures(config: Config, clock: Clock, sequelize: Sequeliz
     await store.sweep(new Date(now.getTime() - dayMs));
     await sweepSessions(sequelize);
     await throttle.sweep();
+    await feed.sweep(new Date(now.getTime() - dayMs));
     await checks.sweep(new Date(now.getTime() - dayMs));
     await jobs.sweep(new Date(now.getTime() - 7 * dayMs));
     await jobs.queue('sweep', {}, 'sweep-next', new Date(now.getTime() + dayMs));

@@ -46,6 +46,12 @@ export class ChangeFeed {
     return Number((await changes.max('seq')) ?? 0);
   }
 
+  /** Forgets what is older; nobody who looks on now needs it. */
+  async sweep(before: Date): Promise<void> {
+    const { changes } = defineWorkModels(this.sequelize);
+    await changes.destroy({ where: { at: { [Op.lt]: before } } });
+  }
+
   stop(): void {
     clearInterval(this.timer);
     this.timer = undefined;
