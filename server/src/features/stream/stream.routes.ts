@@ -1,4 +1,4 @@
-import type { Request, Response } from 'express';
+import type { Response } from 'express';
 import { api, type StreamEvent } from '@tollgate/contracts';
 import { Op, type Sequelize } from 'sequelize';
 import { isDatabaseAway } from '../../platform/database';
@@ -22,8 +22,10 @@ export class ChangeFeed {
 
   constructor(private readonly sequelize: Sequelize) {}
 
-  listen(listener: Listener): () => void {
+  /** @param since where the listener stands: what comes later is told, possibly twice */
+  listen(listener: Listener, since: number): () => void {
     this.listeners.add(listener);
+    if (this.last < 0) this.last = since;
     this.timer ??= setInterval(() => void this.poll(), pollMs).unref();
     return () => {
       this.listeners.delete(listener);
@@ -61,15 +63,12 @@ export class ChangeFeed {
 
   private async poll(): Promise<void> {
     try {
-      const starting = this.last < 0;
-      if (starting) this.last = await this.latest();
       const rows = await this.since(Math.max(0, this.last - overlap));
       const fresh = rows.filter((row) => !this.seen.has(row.seq));
       for (const row of fresh) this.seen.add(row.seq);
       for (const seq of this.seen) if (seq < this.last - overlap) this.seen.delete(seq);
       this.last = Math.max(this.last, ...rows.map((row) => row.seq));
-      // What was there before anyone listened is read by the listener itself.
-      if (!starting) for (const row of fresh) for (const listener of this.listeners) listener(row);
+      for (const row of fresh) for (const listener of this.listeners) listener(row);
     } catch (error) {
       // The database is away: listeners stay, and hear what they missed when it is back.
       if (!isDatabaseAway(error)) log('error', 'change feed', errorFacts(error));
@@ -91,12 +90,8 @@ export function streamRoutes(
       reply: 'text/event-stream',
       handle: async ({ caller, query, request, response }) => {
         const since = Number(request.headers['last-event-id'] ?? query.since ?? NaN);
-        await serve(
-          request,
-          response,
-          feed,
-          Number.isInteger(since) ? since : await feed.latest(),
-          (boardId) => isMember(caller.id, boardId),
+        await serve(response, feed, Number.isInteger(since) ? since : await feed.latest(), (boardId) =>
+          isMember(caller.id, boardId),
         );
       },
     }),
@@ -104,7 +99,6 @@ export function streamRoutes(
 }
 
 async function serve(
-  request: Request,
   response: Response,
   feed: ChangeFeed,
   since: number,
@@ -117,7 +111,10 @@ async function serve(
   });
   response.write(`retry: 2000\nid: ${since}\nevent: start\ndata: {}\n\n`);
   let chain = Promise.resolve();
+  const told = new Set<number>();
   const tell: Listener = (change) => {
+    if (change.seq <= since || told.has(change.seq)) return;
+    told.add(change.seq);
     chain = chain
       .then(async () => {
         if (change.boardId && !(await mayHear(change.boardId))) return;
@@ -125,12 +122,11 @@ async function serve(
       })
       .catch((error: unknown) => log('warning', 'stream', errorFacts(error)));
   };
-  const stopListening = feed.listen(tell);
+  const stopListening = feed.listen(tell, since);
   const heartbeat = setInterval(() => response.write(': here\n\n'), heartbeatMs);
-  request.on('close', () => {
+  response.on('close', () => {
     stopListening();
     clearInterval(heartbeat);
-    response.end();
   });
   for (const change of await feed.since(since)) tell(change);
 }
