@@ -1,0 +1,58 @@
+import type { LimitView } from '@tollgate/contracts';
+import { formatDb, formatQuantity } from '@tollgate/quantities';
+
+const quantityWords: Readonly<Record<LimitView['quantity'], string>> = {
+  'insertion-loss': 'insertion loss',
+  'return-loss-near': 'return loss, near',
+  'return-loss-far': 'return loss, far',
+  'common-return-loss-near': 'common-mode return loss, near',
+  'common-return-loss-far': 'common-mode return loss, far',
+  'mode-conversion': 'mode conversion',
+  'fitted-attenuation': 'fitted attenuation',
+  'insertion-loss-deviation': 'insertion loss deviation',
+  delay: 'delay',
+  'pair-skew': 'pair skew',
+};
+
+export function quantityTitle(quantity: LimitView['quantity']): string {
+  return quantityWords[quantity];
+}
+
+/** `1.84 dB left at 12.9 GHz`, or `0.31 dB over at 4 GHz`; times are in seconds behind the same field. */
+export function marginWords(limit: LimitView): string {
+  const at = limit.worstRefined ?? limit.worst;
+  if (!at) return '';
+  if (limit.quantity === 'delay' || limit.quantity === 'pair-skew') {
+    const margin = at.marginDb ?? 0;
+    return `${formatQuantity(Math.abs(margin), 'time', { digits: 4 })} ${margin < 0 ? 'over' : 'left'}`;
+  }
+  const frequency = formatQuantity(at.frequencyHz, 'frequency', { digits: 4 });
+  if (at.marginDb === null) return `no transmission at ${frequency}`;
+  return `${formatDb(Math.abs(at.marginDb))} ${at.marginDb < 0 ? 'over' : 'left'} at ${frequency}`;
+}
+
+/** Which way a limit runs and where it is measured: `insertion loss at most, TP0 to TP5, 100 ohm`. */
+export function limitFacts(limit: LimitView): string {
+  return [
+    `${quantityWords[limit.quantity]} ${limit.sense === 'max' ? 'at most' : 'at least'}`,
+    limit.from || limit.to ? `${limit.from ?? 'near'} to ${limit.to ?? 'far'}` : '',
+    `${Number(limit.referenceOhm.toPrecision(5))} ohm`,
+    limit.includes?.length ? `with ${limit.includes.join(', ')}` : '',
+  ]
+    .filter(Boolean)
+    .join(', ');
+}
+
+export function rangesWords(ranges: readonly (readonly [number, number])[]): string {
+  return ranges
+    .map(
+      ([from, to]) =>
+        `${formatQuantity(from, 'frequency', { digits: 4 })} to ${formatQuantity(to, 'frequency', { digits: 4 })}`,
+    )
+    .join(', ');
+}
+
+/** The source as people read it: an identifier of a mask set's revision says nothing to them. */
+export function sourceWords(source: string | undefined): string {
+  return (source ?? '').replace(/,? ?[0-9a-f]{8}-[0-9a-f-]{27}$/i, '');
+}

@@ -1,0 +1,36 @@
+import { ChangeDetectionStrategy, Component, computed, inject } from '@angular/core';
+import { formatQuantity } from '@tollgate/quantities';
+import { ChannelStore } from '../document/channel-store';
+import { CheckRunner } from '../document/check-runner';
+import { callOf } from '../elements/element-words';
+import { stripPieces } from './strip-drawing';
+
+const width = 1000;
+
+/** The channel as a thin drawing from near to far: copper with what stands in it. Each piece selects its element. */
+@Component({
+  selector: 'tg-strip',
+  changeDetection: ChangeDetectionStrategy.OnPush,
+  templateUrl: './strip.html',
+  styleUrl: './strip.scss',
+})
+export class Strip {
+  private readonly check = inject(CheckRunner);
+  protected readonly store = inject(ChannelStore);
+
+  protected readonly pieces = computed(() => {
+    const document = this.store.document();
+    if (!document) return [];
+    const pieces = stripPieces(document, width);
+    return document.elements.map((element, i) => ({ ...pieces[i]!, title: callOf(element) }));
+  });
+  protected readonly differential = computed(() => this.store.document()?.signaling === 'differential');
+  protected readonly ends = computed(() => ({
+    from: this.store.document()?.from ?? 'near',
+    to: this.store.document()?.to ?? 'far',
+  }));
+  protected readonly delay = computed(() => {
+    const delayS = this.check.view()?.delayS;
+    return typeof delayS === 'number' ? `${formatQuantity(delayS, 'time', { digits: 4 })} one way` : '';
+  });
+}
