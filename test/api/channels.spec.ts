@@ -323,3 +323,28 @@ describe('mask sets', () => {
     expect(altered.checkProblems[0].message).toContain('differs from the mask set');
   });
 });
+
+describe('a check sheet', () => {
+  it('is a sound PDF whose text names channel, verdict and fingerprint', async () => {
+    const made = await make({ name: 'Lane Ω, printed' });
+    const response = await fetch(`${server.origin}/api/channels/${made.id}/sheet`, {
+      headers: { cookie: engineer.cookieHeader },
+    });
+    expect(response.headers.get('content-type')).toContain('application/pdf');
+    const path = join(server.dataDirectory, 'sheet.pdf');
+    writeFileSync(path, Buffer.from(await response.arrayBuffer()));
+    execFileSync('qpdf', ['--check', path]);
+    const text = execFileSync('pdftotext', ['-layout', path, '-'], { encoding: 'utf8' });
+    expect(text).toContain('Lane Ω, printed');
+    expect(text).toContain('Holds, worst margin');
+    expect(text).toContain(made.check.fingerprint);
+    expect(text).toContain('no compliance test');
+  });
+
+  it('of a channel without a check is refused with what stands in its way', async () => {
+    const made = await make({ elements: [line, { kind: 'touchstone' }] });
+    const reply = await engineer.get(`/api/channels/${made.id}/sheet`);
+    expect(reply.status).toBe(409);
+    expect(reply.body.fields[0].path).toBe('elements[1].file');
+  });
+});

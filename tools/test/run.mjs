@@ -28,6 +28,10 @@ function run(command, args, env = {}) {
   });
 }
 
+function onPath(name) {
+  return (process.env.PATH ?? '').split(':').some((folder) => existsSync(join(folder, name)));
+}
+
 function bin(name) {
   return join(root, 'node_modules/.bin', name);
 }
@@ -81,7 +85,13 @@ async function main() {
   checkNode();
   ensurePackages(root);
   ensureMariadb();
-  if (!existsSync('/usr/bin/chromium')) installPackages(['chromium'], 'Chromium');
+  const programs = { chromium: 'chromium', pdftotext: 'poppler-utils', qpdf: 'qpdf', python3: 'python3' };
+  const missing = Object.keys(programs).filter((name) => !onPath(name));
+  if (missing.length)
+    installPackages(
+      missing.map((name) => programs[name]),
+      `What the tests call (${missing.join(', ')})`,
+    );
 
   const database = await startDatabase(join(work, 'mariadb'));
   try {

@@ -28,6 +28,7 @@ import { healthRoutes } from './health';
 import { createMasksRepository, maskRoutes } from './masks';
 import { createPeopleRepository, createPeopleService, peopleRoutes } from './people';
 import { createPassport, createThrottle, sessionRoutes } from './session';
+import { sheetRoutes } from './sheets';
 import { ChangeFeed, streamRoutes } from './stream';
 
 const dayMs = 24 * 3600 * 1000;
@@ -105,6 +106,7 @@ export function createFeatures(config: Config, clock: Clock, sequelize: Sequeliz
     ...revisionRoutes(boards, boardRows),
     ...fileRoutes(files),
     ...channelRoutes({ channels, exchange, repository: channelRows, boards: boardRows }),
+    ...sheetRoutes({ config, clock, channels, boardOf: (channelId) => channelRows.boardOf(channelId) }),
     ...streamRoutes(feed, boardRows.isMember),
   ];
 
