@@ -98,5 +98,7 @@ function limitViewOf(check: Check, index: number): LimitView {
 
 function sourceWords(source: Source): string {
   if (typeof source === 'string') return source;
-  return [source.text, source.date, source.itemRevision].filter((part) => part !== undefined).join(', ');
+  // An identifier is no word for a person; it stands in where there is no other.
+  const words = [source.text, source.date].filter((part) => part !== undefined);
+  return words.length ? words.join(', ') : (source.itemRevision ?? '');
 }

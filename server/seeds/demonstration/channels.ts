@@ -204,7 +204,7 @@ function clock(name: string, launchFile: string | undefined): Record<string, unk
             title: 'Clock insertion loss',
             quantity: 'insertion-loss',
             sense: 'max',
-            segments: [{ fromHz: '100 MHz', toHz: '14 GHz', formula: '1.2 + 0.9*sqrt(f) + 0.12*f' }],
+            segments: [{ fromHz: '100 MHz', toHz: '14 GHz', formula: '1.5 + 1.1*sqrt(f) + 0.16*f' }],
             status: 'own',
             source: 'Demonstration board rules',
           }

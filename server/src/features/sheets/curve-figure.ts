@@ -24,7 +24,12 @@ const left = 34;
 /** Loss against frequency as vectors: 0 dB at the top, loss growing downwards. */
 export function drawFigure(pdf: PDFKit.PDFDocument, figure: Figure): void {
   keep(pdf, height + 44);
-  pdf.font('strong').fontSize(9.5).fillColor(inkOf.ink).text(figure.title, margin);
+  pdf
+    .font('strong')
+    .fontSize(9.5)
+    .fillColor(inkOf.ink)
+    .text(figure.title, margin, pdf.y, { continued: true });
+  pdf.font('text').fillColor(inkOf.slate).text('   dB over GHz');
   const top = pdf.y + 4;
   const width = contentWidth - left;
   const x = (hz: number) => margin + left + (hz / figure.toHz) * width;
@@ -76,12 +81,6 @@ function grid(
       lineBreak: false,
     });
   }
-  pdf.text('GHz', margin + left + width - 40, top + height + 3, {
-    width: 40,
-    align: 'right',
-    lineBreak: false,
-  });
-  pdf.text('dB', margin, top - 11, { width: left - 6, align: 'right', lineBreak: false });
 }
 
 function drawLimit(
