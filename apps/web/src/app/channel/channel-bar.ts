@@ -1,11 +1,12 @@
 import { ChangeDetectionStrategy, Component, computed, inject } from '@angular/core';
 import { MatButton } from '@angular/material/button';
+import { RouterLink } from '@angular/router';
 import { formatDb, formatQuantity } from '@tollgate/quantities';
 import { ApiClient, downloadName } from '../api/api-client';
 import { Glyph } from '../marks/glyph';
 import { Verdict } from '../marks/verdict';
 import { paths } from '../paths';
-import { Trail, type Step } from '../shell/trail';
+import type { Step } from '../shell/trail';
 import { ChannelStore } from './document/channel-store';
 import { CheckRunner } from './document/check-runner';
 import { ChannelSaving } from './saving/channel-saving';
@@ -13,7 +14,7 @@ import { ChannelSaving } from './saving/channel-saving';
 /** The top bar of a channel: where it is, its name, its verdict, whether it is saved, and the way back. */
 @Component({
   selector: 'tg-channel-bar',
-  imports: [Glyph, MatButton, Trail, Verdict],
+  imports: [Glyph, MatButton, RouterLink, Verdict],
   changeDetection: ChangeDetectionStrategy.OnPush,
   templateUrl: './channel-bar.html',
   styleUrl: './channel-bar.scss',

@@ -33,6 +33,8 @@ export class QuantityEntry {
   readonly scope = input('');
   readonly label = input('');
   readonly optional = input(false);
+  /** What an empty field stands for, where the schema has a default. */
+  readonly fallback = input<number | undefined>();
   readonly placeholder = input('');
   readonly disabled = input(false);
   /** What the last check says of the value. */
@@ -42,10 +44,17 @@ export class QuantityEntry {
   protected readonly id = `tg-entry-${next++}`;
   private readonly focused = signal(false);
   /** What is in the field while a person types, or what could not be read. */
-  private readonly typed = linkedSignal<string, string | undefined>({
-    source: () => `${this.scope()} ${this.path()}`,
-    computation: (key) => this.unread?.get(key),
+  private readonly typed = linkedSignal<{ key: string; value: number | undefined }, string | undefined>({
+    source: () => ({ key: `${this.scope()} ${this.path()}`, value: this.value() }),
+    computation: ({ key, value }, previous) => {
+      if (previous?.source.key !== key) return this.unread?.get(key);
+      if (value === previous.source.value || value === this.emitted) return previous.value;
+      // Changed from elsewhere, such as by an undo: what was typed is of the past.
+      this.unread?.set(key, undefined);
+      return undefined;
+    },
   });
+  private emitted: number | undefined;
   private readonly unit = linkedSignal<string, string | undefined>({
     source: () => `${this.scope()} ${this.path()}`,
     computation: () => undefined,
@@ -68,7 +77,9 @@ export class QuantityEntry {
     const read = this.read(text);
     this.typed.set(text);
     this.unread?.set(`${this.scope()} ${this.path()}`, read.ok ? undefined : text);
-    if (read.ok && read.value !== this.value()) this.valueChange.emit(read.value);
+    if (!read.ok || read.value === this.value()) return;
+    this.emitted = read.value ?? this.fallback();
+    this.valueChange.emit(read.value);
   }
 
   protected enter(): void {

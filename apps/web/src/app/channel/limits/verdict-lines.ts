@@ -43,12 +43,11 @@ export function limitFacts(limit: LimitView): string {
     .join(', ');
 }
 
+const hz = (value: number) => formatQuantity(value, 'frequency', { digits: 4 });
+
 export function rangesWords(ranges: readonly (readonly [number, number])[]): string {
   return ranges
-    .map(
-      ([from, to]) =>
-        `${formatQuantity(from, 'frequency', { digits: 4 })} to ${formatQuantity(to, 'frequency', { digits: 4 })}`,
-    )
+    .map(([from, to]) => (from === to ? `at ${hz(from)}` : `from ${hz(from)} to ${hz(to)}`))
     .join(', ');
 }
 

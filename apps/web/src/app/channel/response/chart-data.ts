@@ -36,17 +36,25 @@ export function limitsOf(view: CheckView, quantities: readonly LimitView['quanti
   return view.limits.filter((limit) => quantities.includes(limit.quantity) && limit.outline.length > 0);
 }
 
-/** Round numbers from 0 that hold the curves and their limits; a deep notch does not flatten all the rest. */
+/**
+ * Round numbers from 0 that hold the curves and their limits; a deep notch does not flatten all the rest, and a limit
+ * counts up to `untilHz` (Nyquist): beyond it many run out of all proportion.
+ */
 export function lossRange(
   values: readonly (number | null)[],
   limits: readonly LimitView[],
   atLeast: number,
+  untilHz = Infinity,
 ): number {
-  const ofLimits = limits.flatMap((limit) => limit.outline.flat().map(([, db]) => db));
+  const ofLimits = limits.flatMap((limit) => {
+    const points = limit.outline.flat();
+    const within = points.filter(([frequencyHz]) => frequencyHz <= untilHz * 1.001);
+    return (within.length ? within : points.slice(0, 1)).map(([, db]) => db);
+  });
   const sorted = values.filter((value) => value !== null).sort((a, b) => a - b);
   const deep = sorted[Math.floor(sorted.length * 0.99)] ?? 0;
-  const top = Math.max(deep * 1.15, ...ofLimits.map((db) => db * 1.25), atLeast);
-  const step = top > 60 ? 20 : top > 30 ? 10 : top > 12 ? 5 : top > 4 ? 2 : 1;
+  const top = Math.max(deep * 1.15, ...ofLimits.map((db) => db * 1.15), atLeast);
+  const step = top > 60 ? 20 : top > 25 ? 10 : top > 12 ? 4 : top > 4 ? 2 : 1;
   return Math.min(120, Math.ceil(top / step) * step);
 }
 
@@ -59,8 +67,12 @@ export function frequencyRange(
   const ends = limits.flatMap((limit) => limit.outline.flat().map(([frequencyHz]) => frequencyHz));
   const all = [view.frequenciesHz[0] ?? 0, view.frequenciesHz.at(-1) ?? 1e9, ...ends];
   const above = all.filter((frequencyHz) => frequencyHz > 0);
-  const low = log ? Math.min(...above) : Math.min(...all);
-  return [low / 1e9, Math.max(...all) / 1e9];
+  const high = Math.max(...all);
+  const first = Math.min(...all);
+  const low = log ? Math.min(...above) : first < high / 20 ? 0 : first;
+  // A limit at one frequency at the very end would stand on the frame.
+  const room = limits.some((limit) => limit.outline.flat().length === 1 && limit.outline[0]![0]![0] === high);
+  return [low / 1e9, (room ? 1.03 * high : high) / 1e9];
 }
 
 /** Index of the grid point next to a frequency in GHz. */

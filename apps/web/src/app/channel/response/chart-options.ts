@@ -25,6 +25,7 @@ export function chartOptions({ zoomed }: Hooks): NonNullable<ChartConfiguration<
         border: { display: true },
         ticks: {
           font,
+          includeBounds: false,
           maxTicksLimit: 10,
           padding: 6,
           maxRotation: 0,

@@ -41,9 +41,9 @@ export function overlayPlugin(read: () => Overlay | undefined): Plugin {
       if (!overlay) return;
       within(chart, (context) => {
         overlay.marks.forEach((mark) => vertical(chart, context, mark, overlay));
-        if (overlay.worst) ring(chart, context, overlay.worst, overlay);
         if (overlay.crosshair !== undefined) line(chart, context, overlay.crosshair, overlay.markColour, []);
       });
+      if (overlay.worst) ring(chart, overlay.worst, overlay);
     },
   };
 }
@@ -131,9 +131,9 @@ function vertical(
   const width = context.measureText(mark.text).width;
   const left = x + 6 + width < chart.chartArea.right ? x + 6 : x - 6 - width;
   context.fillStyle = overlay.ground;
-  context.fillRect(left - 2, chart.chartArea.top + 3, width + 4, 15);
+  context.fillRect(left - 2, chart.chartArea.bottom - 20, width + 4, 15);
   context.fillStyle = overlay.markColour;
-  context.fillText(mark.text, left, chart.chartArea.top + 14);
+  context.fillText(mark.text, left, chart.chartArea.bottom - 9);
 }
 
 function line(
@@ -155,19 +155,20 @@ function line(
   context.restore();
 }
 
-function ring(
-  chart: Chart,
-  context: CanvasRenderingContext2D,
-  at: { x: number; y: number },
-  overlay: Overlay,
-): void {
+/** Not clipped: it may stand on the frame, but not outside the range that is shown. */
+function ring(chart: Chart, at: { x: number; y: number }, overlay: Overlay): void {
+  const { ctx: context, chartArea } = chart;
+  const [x, y] = [pixel(chart, 'x', at.x), pixel(chart, 'y', at.y)];
+  if (x < chartArea.left - 1 || x > chartArea.right + 1 || y > chartArea.bottom + 1) return;
+  context.save();
   context.beginPath();
-  context.arc(pixel(chart, 'x', at.x), pixel(chart, 'y', at.y), 5, 0, 2 * Math.PI);
+  context.arc(x, y, 5, 0, 2 * Math.PI);
   context.fillStyle = overlay.ground;
   context.fill();
   context.lineWidth = 2.2;
   context.strokeStyle = overlay.worstColour;
   context.stroke();
+  context.restore();
 }
 
 function pixel(chart: Chart, axis: 'x' | 'y', value: number): number {

@@ -6,7 +6,6 @@ import {
   inject,
   input,
   output,
-  signal,
   viewChild,
 } from '@angular/core';
 import type { CheckView, LimitView } from '@tollgate/contracts';
@@ -86,7 +85,6 @@ export class LossChart {
   protected readonly data: Data = { datasets: [] };
   protected readonly options = chartOptions({ zoomed: (is) => this.zoomed.emit(is) });
   protected readonly plugins = [overlayPlugin(() => this.overlay())];
-  private readonly drawn = signal(0);
 
   private readonly limits = computed(() => limitsOf(this.view(), this.quantities()));
   private readonly curves = computed(() =>
@@ -135,7 +133,6 @@ export class LossChart {
     effect(() => {
       this.overlay();
       this.refill();
-      this.drawn.update((count) => count + 1);
     });
   }
 
@@ -172,7 +169,7 @@ export class LossChart {
     }));
     const [min, max] = frequencyRange(this.view(), this.limits(), this.log());
     const values = this.curves().flatMap(({ points }) => points.map(({ y }) => y));
-    const top = lossRange(values, this.limits(), this.atLeastDb());
+    const top = lossRange(values, this.limits(), this.atLeastDb(), this.view().nyquistHz);
     return { datasets: [...curves, ...edges], min, max, top, log: this.log(), palette };
   });
 
@@ -186,8 +183,9 @@ export class LossChart {
     });
     this.data.datasets.length = datasets.length;
     const chart = this.chart().chart;
-    if (!chart) return;
-    const [x, y] = [chart.options.scales!['x']!, chart.options.scales!['y']!];
+    // Before the chart is made, its options are what it is made of; after, it has its own copy.
+    const scales = (chart?.options ?? this.options)?.scales;
+    const [x, y] = [scales!['x']!, scales!['y']!];
     Object.assign(x, { type: log ? 'logarithmic' : 'linear', min, max });
     Object.assign(y, { min: 0, max: top });
     for (const axis of [x, y]) {
@@ -195,8 +193,8 @@ export class LossChart {
       axis.ticks!.color = palette.slate;
       axis.border!.color = palette.rule;
     }
-    chart.update('none');
-    this.painted.emit();
+    chart?.update('none');
+    if (chart) this.painted.emit();
   }
 }
 
