@@ -33,7 +33,7 @@ export function withDuplicate(
   const original = document.elements.find((element) => element.id === ofId);
   if (!original) return { document, id: ofId };
   const id = freeId(kindDescription(original.kind).prefix, elementIds(document));
-  return { document: inserted(document, { ...structuredClone(original), id }, ofId), id };
+  return { document: inserted(document, { ...original, id }, ofId), id };
 }
 
 export function withoutElement(document: CompleteChannel, id: string): CompleteChannel {
@@ -69,7 +69,7 @@ export function withElement(
   change: (element: PlacedElement) => ChannelElement,
 ): CompleteChannel {
   const elements = document.elements.map((element) =>
-    element.id === id ? ({ ...change(element), id } as PlacedElement) : element,
+    element.id === id ? { ...change(element), id } : element,
   );
   return { ...document, elements };
 }

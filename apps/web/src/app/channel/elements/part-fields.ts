@@ -73,7 +73,7 @@ export class PartFields {
     const likely = this.file()?.likelyPortOrder;
     return portOrders.map((value) => ({
       value,
-      title: `${orderTitles[value]}${likely === value ? ' (as the data says)' : ''}`,
+      title: `${orderTitles[value]}${likely === value ? ' (likely)' : ''}`,
     }));
   });
   /** A choice of order stands for four ports; any other count is picked port by port. */

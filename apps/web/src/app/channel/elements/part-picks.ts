@@ -7,8 +7,8 @@ export const orderTitles: Readonly<Record<PortOrder, string>> = {
 };
 
 export const interpolationPicks = [
-  { value: 'polar', title: 'magnitude and phase' },
-  { value: 'rectangular', title: 'real and imaginary' },
+  { value: 'polar', title: 'by magnitude' },
+  { value: 'rectangular', title: 'by real part' },
 ];
 
 export const belowPicks = [

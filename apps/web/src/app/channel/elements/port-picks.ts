@@ -120,12 +120,12 @@ export class PortPicksFields {
       return;
     }
     const starts = this.seats().length === 4 ? [1, 3, 2, 4] : [1, 2];
-    const entries = this.seats().map((seat, i) => [seat.name, starts[i]!] as const);
+    const entries = this.seats().map((seat, i) => [seat.name, starts[i]] as const);
     this.changed.emit(Object.fromEntries(entries) as PortPicks);
   }
 
   protected pick(seat: Seat, event: Event): void {
     const port = Number((event.target as HTMLSelectElement).value);
-    this.changed.emit({ ...this.picks()!, [seat.name]: port } as PortPicks);
+    this.changed.emit({ ...this.picks()!, [seat.name]: port });
   }
 }

@@ -11,7 +11,7 @@ let next = 0;
 @Component({
   selector: 'tg-pick-entry',
   changeDetection: ChangeDetectionStrategy.OnPush,
-  host: { '[class.wide]': 'wide()' },
+  host: { class: 'choice', '[class.wide]': 'wide()' },
   template: `
     <label [for]="id">{{ label() }}</label>
     <select

@@ -65,7 +65,8 @@ export function frequencyRange(
   log: boolean,
 ): [number, number] {
   const ends = limits.flatMap((limit) => limit.outline.flat().map(([frequencyHz]) => frequencyHz));
-  const all = [view.frequenciesHz[0] ?? 0, view.frequenciesHz.at(-1) ?? 1e9, ...ends];
+  const lowest = view.frequenciesHz.find((frequencyHz) => !log || frequencyHz > 0) ?? 0;
+  const all = [lowest, view.frequenciesHz.at(-1) ?? 1e9, ...ends];
   const above = all.filter((frequencyHz) => frequencyHz > 0);
   const high = Math.max(...all);
   const first = Math.min(...all);

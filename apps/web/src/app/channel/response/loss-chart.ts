@@ -184,7 +184,7 @@ export class LossChart {
     this.data.datasets.length = datasets.length;
     const chart = this.chart().chart;
     // Before the chart is made, its options are what it is made of; after, it has its own copy.
-    const scales = (chart?.options ?? this.options)?.scales;
+    const { scales } = (chart?.options ?? this.options) as ReturnType<typeof chartOptions>;
     const [x, y] = [scales!['x']!, scales!['y']!];
     Object.assign(x, { type: log ? 'logarithmic' : 'linear', min, max });
     Object.assign(y, { min: 0, max: top });

@@ -1,4 +1,4 @@
-import { freeId, kindDescription, type CompleteChannel } from '@tollgate/contracts';
+import { freeId, kindDescription, type CompleteChannel, type ElementKind } from '@tollgate/contracts';
 import { isSame } from './same';
 
 export type Side = 'mine' | 'theirs';
@@ -47,7 +47,7 @@ export function mergeDocuments(
 }
 
 function prefixOfElement(item: Item): string {
-  return kindDescription((item as unknown as CompleteChannel['elements'][number]).kind).prefix;
+  return kindDescription(item['kind'] as ElementKind).prefix;
 }
 
 class Merge {
@@ -79,7 +79,7 @@ class Merge {
     return ids.flatMap((id) => {
       const at = `${name}.${id}`;
       const [was, my, their] = [baseOf.get(id), mineOf.get(id), theirsOf.get(id)];
-      if (was && my && their) return [this.fields(was, my, their, at, nameOf(my, id)) as Item];
+      if (was && my && their) return [this.fields(was, my, their, at, nameOf(my, id))];
       if (!was) return my ?? their ?? [];
       const kept = this.value(was, my, their, at, nameOf(was, id), '') as Item | undefined;
       return kept ?? [];
