@@ -1,0 +1,51 @@
+import { TestClient } from '../support/client';
+import { channelDocument } from '../support/fixtures';
+import { Product } from '../support/product';
+
+let product: Product;
+beforeAll(async () => {
+  product = await Product.start();
+}, 300_000);
+afterAll(() => product.stop());
+
+/** Saves version after version until told to stop; keeps the last version the server acknowledged. */
+async function saveThrough(
+  client: TestClient,
+  channelId: string,
+  from: number,
+  kill: () => void,
+): Promise<number> {
+  let acknowledged = from;
+  for (let round = 0; round < 400; round++) {
+    if (round === 5) kill();
+    const document = channelDocument({ name: `Saved ${acknowledged + 1}` });
+    const reply = await client
+      .put(`/api/channels/${channelId}`, { document }, { 'if-match': `"${acknowledged}"` })
+      .catch(() => undefined);
+    if (reply?.status === 200) acknowledged = reply.body.version as number;
+    // What was written and whose acknowledgement was lost is found as a newer version.
+    else if (reply?.status === 412) acknowledged = reply.body.current.version as number;
+    else await new Promise((resolve) => setTimeout(resolve, 100));
+    if (round > 8 && reply?.status === 200) return acknowledged;
+  }
+  throw new Error(`It did not come back:\n${product.output}`);
+}
+
+describe.each(['server', 'database'] as const)('a killed %s', (victim) => {
+  it('loses nothing that was acknowledged, and comes back by itself', async () => {
+    const client = new TestClient(product.address);
+    const person = product.signIn('Layout engineer');
+    await client.signIn(person.email, person.password);
+    const board = (await client.post('/api/boards', { name: `Through a killed ${victim}` })).body;
+    const made = (
+      await client.post(`/api/revisions/${board.revisions[0].id}/channels`, { document: channelDocument() })
+    ).body;
+    const pid = product.run[victim].pid;
+    const last = await saveThrough(client, made.id, 1, () => process.kill(pid, 'SIGKILL'));
+    expect(product.run[victim].pid).not.toBe(pid);
+    const stored = (await client.get(`/api/channels/${made.id}`)).body;
+    expect(stored.version).toBe(last);
+    expect(stored.name).toBe(`Saved ${last}`);
+    expect(stored.check.verdict).toBe('holds');
+  }, 120_000);
+});
