@@ -1,4 +1,4 @@
-import { ComponentFixture, TestBed } from '@angular/core/testing';
+import { type ComponentFixture, TestBed } from '@angular/core/testing';
 import { QuantityEntry } from './quantity-entry';
 import { readEntry } from './read-entry';
 import { UnreadTexts } from './unread-texts';

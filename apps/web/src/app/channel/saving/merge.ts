@@ -79,7 +79,7 @@ class Merge {
     return ids.flatMap((id) => {
       const at = `${name}.${id}`;
       const [was, my, their] = [baseOf.get(id), mineOf.get(id), theirsOf.get(id)];
-      if (was && my && their) return [this.fields(was, my, their, at, nameOf(my, id))];
+      if (was && my && their) return [{ ...this.fields(was, my, their, at, nameOf(my, id)), id }];
       if (!was) return my ?? their ?? [];
       const kept = this.value(was, my, their, at, nameOf(was, id), '') as Item | undefined;
       return kept ?? [];
