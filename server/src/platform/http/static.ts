@@ -1,10 +1,13 @@
 import { existsSync } from 'node:fs';
 import { join } from 'node:path';
+import compression from 'compression';
 import express, { type Express } from 'express';
 
 /** Serves the built client; any address that is no file is a page of the client. */
 export function serveClient(app: Express, directory: string): void {
   const index = join(directory, 'index.html');
+  // Of the client only: a check's reply must not wait for a compressor.
+  app.use(compression());
   app.use(
     express.static(directory, {
       index: false,
