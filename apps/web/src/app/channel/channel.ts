@@ -115,6 +115,8 @@ export class ChannelPage {
     const key = event.key.toLowerCase();
     const again = key === 'y' || (key === 'z' && event.shiftKey);
     if (!again && key !== 'z') return;
+    // A dialog's fields have their own.
+    if (event.target instanceof Element && event.target.closest('.cdk-overlay-container')) return;
     event.preventDefault();
     // A field's own half-typed text is written first: undo is of the document.
     if (event.target instanceof HTMLElement) event.target.dispatchEvent(new FocusEvent('blur'));

@@ -36,7 +36,7 @@ const drawnOnly = new Set<ElementKind>(['trace', 'via']);
       padding: 0 8px;
     }
     .group {
-      padding: 8px 16px 2px;
+      padding: 8px 12px 2px;
       color: var(--tg-slate);
       font-size: var(--tg-text-small);
     }

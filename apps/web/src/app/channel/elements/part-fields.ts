@@ -136,7 +136,8 @@ export class PartFields {
       next: (added) => added && this.replaced.emit((element) => withFile(element as Part, added)),
       error: (error: unknown) => {
         const problem = apiProblemOf(error);
-        this.failure.set({ text: `${file.name} was not taken. ${problem.message}`, fields: problem.fields });
+        const why = problem.fields.length ? '' : ` ${problem.message}`;
+        this.failure.set({ text: `${file.name} was not taken.${why}`, fields: problem.fields });
       },
     });
   }

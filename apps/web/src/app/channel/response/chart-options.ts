@@ -1,13 +1,19 @@
-import type { ChartConfiguration } from 'chart.js';
+import type { Chart, ChartConfiguration } from 'chart.js';
+
+export type Range = readonly [from: number, to: number];
 
 interface Hooks {
-  readonly zoomed: (is: boolean) => void;
+  readonly zoomed: (range: Range) => void;
 }
 
 const font = { family: '"Source Sans 3", sans-serif', size: 12 };
 
 /** What never changes about a loss chart: thousands of points, nothing that moves by itself, the axis downward. */
 export function chartOptions({ zoomed }: Hooks): NonNullable<ChartConfiguration<'line'>['options']> {
+  const tell = ({ chart }: { chart: Chart }) => {
+    const { min, max } = chart.scales['x']!;
+    zoomed([min, max]);
+  };
   return {
     animation: false,
     parsing: false,
@@ -50,13 +56,13 @@ export function chartOptions({ zoomed }: Hooks): NonNullable<ChartConfiguration<
       tooltip: { enabled: false },
       zoom: {
         limits: { x: { min: 'original', max: 'original' } },
-        pan: { enabled: true, mode: 'x', modifierKey: 'shift' },
+        pan: { enabled: true, mode: 'x', modifierKey: 'shift', onPan: tell },
         zoom: {
           mode: 'x',
           wheel: { enabled: true, speed: 0.08 },
           pinch: { enabled: true },
           drag: { enabled: true, threshold: 8, backgroundColor: 'rgb(156 85 38 / 14%)' },
-          onZoomComplete: () => zoomed(true),
+          onZoom: tell,
         },
       },
     },

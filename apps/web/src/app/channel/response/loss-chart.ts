@@ -21,7 +21,7 @@ import {
   type CurveName,
   type Point,
 } from './chart-data';
-import { chartOptions } from './chart-options';
+import { chartOptions, type Range } from './chart-options';
 import { overlayPlugin, type Overlay } from './hatch';
 
 export interface Trace {
@@ -79,11 +79,13 @@ export class LossChart {
   /** Frequency in GHz under the pointer, in whichever chart it is. */
   readonly crosshair = input<number | undefined>();
   readonly pointed = output<number | undefined>();
-  readonly zoomed = output<boolean>();
+  /** The range that is shown, in GHz; undefined is the whole. */
+  readonly range = input<Range | undefined>();
+  readonly zoomed = output<Range>();
   readonly painted = output<void>();
 
   protected readonly data: Data = { datasets: [] };
-  protected readonly options = chartOptions({ zoomed: (is) => this.zoomed.emit(is) });
+  protected readonly options = chartOptions({ zoomed: (range) => this.zoomed.emit(range) });
   protected readonly plugins = [overlayPlugin(() => this.overlay())];
 
   private readonly limits = computed(() => limitsOf(this.view(), this.quantities()));
@@ -136,13 +138,6 @@ export class LossChart {
     });
   }
 
-  /** Back to the whole range. */
-  reset(): void {
-    const chart = this.chart().chart as { resetZoom?: (mode: 'none') => void } | undefined;
-    chart?.resetZoom?.('none');
-    this.zoomed.emit(false);
-  }
-
   protected look(event: MouseEvent): void {
     const chart = this.chart().chart;
     const x = chart?.scales['x']?.getValueForPixel(event.offsetX);
@@ -167,7 +162,7 @@ export class LossChart {
       pointBackgroundColor: palette.oxide,
       order: 2,
     }));
-    const [min, max] = frequencyRange(this.view(), this.limits(), this.log());
+    const [min, max] = this.range() ?? frequencyRange(this.view(), this.limits(), this.log());
     const values = this.curves().flatMap(({ points }) => points.map(({ y }) => y));
     const top = lossRange(values, this.limits(), this.atLeastDb(), this.view().nyquistHz);
     return { datasets: [...curves, ...edges], min, max, top, log: this.log(), palette };

@@ -1,7 +1,8 @@
-import { ChangeDetectionStrategy, Component, computed, inject, signal, viewChildren } from '@angular/core';
+import { ChangeDetectionStrategy, Component, computed, inject, signal } from '@angular/core';
 import { formatDb, formatQuantity } from '@tollgate/quantities';
 import { CheckRunner } from '../document/check-runner';
 import { nearestPoint } from './chart-data';
+import type { Range } from './chart-options';
 import { LossChart, type Trace } from './loss-chart';
 import { NumbersTable } from './numbers-table';
 
@@ -15,11 +16,11 @@ import { NumbersTable } from './numbers-table';
 })
 export class Response {
   protected readonly check = inject(CheckRunner);
-  private readonly charts = viewChildren(LossChart);
 
   protected readonly log = signal(false);
   protected readonly asTable = signal(false);
-  protected readonly zoomed = signal(false);
+  /** Both charts show the same frequencies. */
+  protected readonly range = signal<Range | undefined>(undefined);
   protected readonly pointed = signal<number | undefined>(undefined);
 
   protected readonly through: readonly Trace[] = [
@@ -47,9 +48,9 @@ export class Response {
   });
   protected readonly crosshair = computed(() => this.readout()?.ghz);
 
-  protected reset(): void {
-    this.charts().forEach((chart) => chart.reset());
-    this.zoomed.set(false);
+  protected switchLog(): void {
+    this.log.set(!this.log());
+    this.range.set(undefined);
   }
 
   /** The bench waits for this mark: the new curve is on the canvas. */
