@@ -13,6 +13,7 @@ import { CheckRunner } from './document/check-runner';
     @if (view(); as view) {
       <span>weakest standing: {{ view.weakestStanding }} ({{ view.weakestElement }})</span>
       <span class="engine">engine {{ view.engine }}</span>
+      <a [href]="sheet()" download title="The recorded check on paper, unsigned">Check sheet (PDF)</a>
     }
   `,
   styles: `
@@ -39,6 +40,8 @@ export class ChannelFoot {
   private readonly store = inject(ChannelStore);
   protected readonly view = inject(CheckRunner).view;
 
+  /** The server's own page, of the check that is recorded. */
+  protected readonly sheet = computed(() => `/api/channels/${this.store.channel()?.id ?? ''}/sheet`);
   protected readonly masks = computed(() => {
     const titles = this.store.document()?.limits.map((limit) => limit.title) ?? [];
     return titles.length ? `Mask: ${titles.join('; ')}` : 'No limit yet';
