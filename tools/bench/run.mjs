@@ -1,0 +1,95 @@
+import { spawnSync } from 'node:child_process';
+import { existsSync, mkdtempSync, rmSync } from 'node:fs';
+import { tmpdir } from 'node:os';
+import { dirname, join } from 'node:path';
+import { fileURLToPath } from 'node:url';
+import { ensurePackages } from '../start/packages.mjs';
+
+/**
+ * `npm run bench`: medians of this engine, of Debian's scikit-rf and of plain C compiled on the spot, side by side, one
+ * after the other on one thread. What is not installed has no figure (null with `-- --json`).
+ */
+const root = join(dirname(fileURLToPath(import.meta.url)), '../..');
+const work = mkdtempSync(join(tmpdir(), 'tg-bench-'));
+const file = join(work, 'long.s4p');
+const oneThread = { OMP_NUM_THREADS: '1', OPENBLAS_NUM_THREADS: '1' };
+
+/** Runs one of the three programs; its lines "job seconds" as a map, or undefined where it cannot run here. */
+function times(name, command, args) {
+  const { status, stdout, stderr, error } = spawnSync(command, args, {
+    encoding: 'utf8',
+    env: { ...process.env, ...oneThread },
+  });
+  if (error || status !== 0) {
+    console.error(`${name} is left out: ${error?.message ?? stderr.trim().split('\n').at(-1)}`);
+    return undefined;
+  }
+  return new Map(
+    stdout
+      .split('\n')
+      .map((line) => line.trim().split(' '))
+      .filter((words) => words.length === 2)
+      .map(([job, seconds]) => [job, Number(seconds)]),
+  );
+}
+
+async function ours() {
+  const { build } = await import('esbuild');
+  const outfile = join(work, 'ours.mjs');
+  await build({
+    entryPoints: [join(root, 'test/bench/ours.ts')],
+    outfile,
+    bundle: true,
+    platform: 'node',
+    format: 'esm',
+    target: 'node20',
+    tsconfig: join(root, 'tsconfig.base.json'),
+    logLevel: 'warning',
+  });
+  const found = times('This engine', process.execPath, [outfile, file, work]);
+  if (!found) throw new Error('The bench of this engine does not run.');
+  return found;
+}
+
+function plainC() {
+  const program = join(work, 'plain');
+  const built = spawnSync('gcc', ['-O3', '-o', program, join(root, 'test/bench/plain.c')], {
+    encoding: 'utf8',
+  });
+  if (built.error || built.status !== 0) {
+    console.error(`C is left out: ${built.error?.message ?? built.stderr}`);
+    return undefined;
+  }
+  return times('C', program, [file]);
+}
+
+function scikitRf() {
+  const python = '/usr/bin/python3';
+  if (!existsSync(python)) return undefined;
+  return times('scikit-rf', python, [join(root, 'test/bench/scikit_rf.py'), file, work]);
+}
+
+function table(rows) {
+  const shown = (value) => (value === null ? '-' : `${(value * 1000).toFixed(2)} ms`).padStart(12);
+  const lines = rows.map((row) => row.job.padEnd(28) + shown(row.ours) + shown(row.scikitRf) + shown(row.c));
+  return [
+    `${'job'.padEnd(28)}${'ours'.padStart(12)}${'scikit-rf'.padStart(12)}${'C'.padStart(12)}`,
+    ...lines,
+  ].join('\n');
+}
+
+try {
+  ensurePackages(root);
+  const engine = await ours();
+  const c = plainC();
+  const reference = scikitRf();
+  const rows = [...engine].map(([job, seconds]) => ({
+    job,
+    ours: seconds,
+    scikitRf: reference?.get(job) ?? null,
+    c: c?.get(job) ?? null,
+  }));
+  console.log(process.argv.includes('--json') ? JSON.stringify(rows) : table(rows));
+} finally {
+  rmSync(work, { recursive: true, force: true });
+}
