@@ -162,7 +162,7 @@ export class LossChart {
       pointBackgroundColor: palette.oxide,
       order: 2,
     }));
-    const [min, max] = this.range() ?? frequencyRange(this.view(), this.limits(), this.log());
+    const [min, max] = this.range() ?? frequencyRange(this.view(), this.view().limits, this.log());
     const values = this.curves().flatMap(({ points }) => points.map(({ y }) => y));
     const top = lossRange(values, this.limits(), this.atLeastDb(), this.view().nyquistHz);
     return { datasets: [...curves, ...edges], min, max, top, log: this.log(), palette };
