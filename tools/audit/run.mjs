@@ -16,9 +16,9 @@ if (!existsSync(folder)) {
 }
 ensurePackages(root);
 ensureMariadb();
-const { buildAll } = await import('../build/build.mjs');
+const { buildServerOnly } = await import('../build/build.mjs');
 const out = resolve(root, process.env.TOLLGATE_BUILD || 'dist');
-await buildAll(out);
+await buildServerOnly(out);
 const wasUp = existsSync(join(dataDirectory, 'run.json'));
 const database = await startDatabase(folder);
 const { status } = spawnSync(process.execPath, [join(out, 'server/verify.mjs')], {

@@ -46,7 +46,10 @@ async function buildServer(out) {
   const { build } = await import('esbuild');
   const { dependencies } = JSON.parse(readFileSync(join(root, 'package.json'), 'utf8'));
   const workers = filesBelow(join(root, 'server/src')).filter((path) => path.endsWith('.worker.ts'));
-  const entries = [join(root, 'server/src/main.ts'), join(root, 'server/src/verify.ts'), ...workers];
+  const entries = [
+    ...['main', 'verify', 'migrate'].map((name) => join(root, `server/src/${name}.ts`)),
+    ...workers,
+  ];
   await build({
     entryPoints: Object.fromEntries(entries.map((path) => [basename(path, '.ts'), path])),
     outdir: join(out, 'server'),
@@ -83,10 +86,16 @@ async function buildClient(out) {
   });
 }
 
+/** The server alone, for commands that need no client. */
+export async function buildServerOnly(out) {
+  mkdirSync(out, { recursive: true });
+  await unlessSame(out, 'server', ['server', 'libs', 'tools/build'], () => buildServer(out));
+}
+
 /** Builds what has changed since the last time into `out`: out/server and out/web/browser. */
 export async function buildAll(out) {
   mkdirSync(out, { recursive: true });
-  const server = unlessSame(out, 'server', ['server', 'libs'], () => buildServer(out));
+  const server = buildServerOnly(out);
   const client = unlessSame(out, 'web', ['apps/web', 'libs'], () => {
     console.log('Building the client (about half a minute)');
     return buildClient(out);
