@@ -1,9 +1,10 @@
-import { computed, inject, Injectable, signal } from '@angular/core';
+import { computed, DestroyRef, inject, Injectable, signal } from '@angular/core';
 import { takeUntilDestroyed, toObservable } from '@angular/core/rxjs-interop';
 import type { Channel, CheckView, CompleteChannel } from '@tollgate/contracts';
-import { catchError, debounceTime, map, of, switchMap, type Observable } from 'rxjs';
+import { catchError, debounceTime, map, merge, of, Subject, switchMap, type Observable } from 'rxjs';
 import { ApiClient } from '../../api/api-client';
 import { apiProblemOf } from '../../api/api-problem';
+import { Availability } from '../../api/availability';
 import { ChannelStore } from './channel-store';
 
 const settleMs = 30;
@@ -14,7 +15,10 @@ type Outcome = { readonly view: CheckView } | { readonly failure: unknown };
 @Injectable()
 export class CheckRunner {
   private readonly api = inject(ApiClient);
+  private readonly availability = inject(Availability);
+  private readonly destroyed = inject(DestroyRef);
   private readonly store = inject(ChannelStore);
+  private readonly again = new Subject<void>();
   private readonly last = signal<CheckView | undefined>(undefined);
   private readonly of = signal<CompleteChannel | undefined>(undefined);
   private readonly said = signal('');
@@ -27,9 +31,10 @@ export class CheckRunner {
   readonly behind = computed(() => this.last() !== undefined && this.of() !== this.store.document());
 
   constructor() {
-    toObservable(this.store.document)
+    merge(toObservable(this.store.document), this.again)
       .pipe(
         debounceTime(settleMs),
+        map(() => this.store.document()),
         switchMap((document) => (document ? this.check(document) : of(undefined))),
         takeUntilDestroyed(),
       )
@@ -40,7 +45,8 @@ export class CheckRunner {
   show(channel: Channel): void {
     this.last.set(channel.check ?? undefined);
     this.of.set(channel.check ? channel.document : undefined);
-    this.said.set(channel.check ? '' : (channel.checkProblems[0]?.message ?? ''));
+    const why = channel.checkProblems[0]?.message;
+    this.said.set(channel.check || !why ? '' : uncheckable(why));
   }
 
   private check(document: CompleteChannel): Observable<void> {
@@ -62,7 +68,19 @@ export class CheckRunner {
       return;
     }
     const problem = apiProblemOf(outcome.failure);
+    if (problem.away) {
+      this.said.set('Not checked while the server is away.');
+      this.availability
+        .lost()
+        .pipe(takeUntilDestroyed(this.destroyed))
+        .subscribe(() => this.again.next());
+      return;
+    }
     this.store.problems.set(problem.fields);
-    this.said.set(problem.fields[0]?.message ?? problem.message);
+    this.said.set(uncheckable(problem.fields[0]?.message ?? problem.message));
   }
+}
+
+function uncheckable(why: string): string {
+  return `This document cannot be checked: ${why}`;
 }

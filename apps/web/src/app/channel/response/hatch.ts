@@ -10,6 +10,8 @@ export interface Forbidden {
 export interface Overlay {
   readonly forbidden: readonly Forbidden[];
   readonly hatchColour: string;
+  /** Limits at one frequency. */
+  readonly dots: readonly { readonly x: number; readonly y: number }[];
   /** Vertical marks: frequency in GHz and a word. */
   readonly marks: readonly { readonly x: number; readonly text: string }[];
   readonly markColour: string;
@@ -43,6 +45,7 @@ export function overlayPlugin(read: () => Overlay | undefined): Plugin {
         overlay.marks.forEach((mark) => vertical(chart, context, mark, overlay));
         if (overlay.crosshair !== undefined) line(chart, context, overlay.crosshair, overlay.markColour, []);
       });
+      overlay.dots.forEach((at) => dot(chart, at, overlay.hatchColour));
       if (overlay.worst) ring(chart, overlay.worst, overlay);
     },
   };
@@ -169,6 +172,15 @@ function ring(chart: Chart, at: { x: number; y: number }, overlay: Overlay): voi
   context.strokeStyle = overlay.worstColour;
   context.stroke();
   context.restore();
+}
+
+function dot({ ctx: context, chartArea, scales }: Chart, at: { x: number; y: number }, colour: string): void {
+  const [x, y] = [scales['x']!.getPixelForValue(at.x), scales['y']!.getPixelForValue(at.y)];
+  if (x < chartArea.left - 1 || x > chartArea.right + 1 || y > chartArea.bottom + 1) return;
+  context.beginPath();
+  context.arc(x, y, 3.5, 0, 2 * Math.PI);
+  context.fillStyle = colour;
+  context.fill();
 }
 
 function pixel(chart: Chart, axis: 'x' | 'y', value: number): number {

@@ -102,6 +102,9 @@ export class LossChart {
     return {
       forbidden: this.edges().map(({ limit, points }) => ({ points, beyondIsLarger: limit.sense === 'max' })),
       hatchColour: palette.oxide,
+      dots: this.edges().flatMap(({ points }) =>
+        points.length === 1 && points[0]!.y !== null ? [{ x: points[0]!.x, y: points[0]!.y }] : [],
+      ),
       marks:
         nyquist === undefined
           ? []
@@ -158,8 +161,6 @@ export class LossChart {
       data: points,
       borderColor: palette.oxide,
       borderWidth: 1.5,
-      pointRadius: points.filter(({ y }) => y !== null).length === 1 ? 3 : 0,
-      pointBackgroundColor: palette.oxide,
       order: 2,
     }));
     const [min, max] = this.range() ?? frequencyRange(this.view(), this.view().limits, this.log());
@@ -173,8 +174,8 @@ export class LossChart {
     const { datasets, min, max, top, log, palette } = this.structure();
     datasets.forEach((dataset, i) => {
       const old = this.data.datasets[i];
-      if (old) Object.assign(old, { pointRadius: 0 }, dataset);
-      else this.data.datasets[i] = { pointRadius: 0, ...dataset };
+      if (old) Object.assign(old, dataset);
+      else this.data.datasets[i] = { ...dataset, pointRadius: 0 };
     });
     this.data.datasets.length = datasets.length;
     const chart = this.chart().chart;
