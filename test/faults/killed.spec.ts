@@ -8,7 +8,10 @@ beforeAll(async () => {
 }, 300_000);
 afterAll(() => product.stop());
 
-/** Saves version after version until told to stop; keeps the last version the server acknowledged. */
+/**
+ * Saves version after version, the kill falling while a save is on its way, until saves succeed again. A version once
+ * acknowledged must never be found missing: what is stored may be newer than the last answer, never older.
+ */
 async function saveThrough(
   client: TestClient,
   channelId: string,
@@ -17,15 +20,23 @@ async function saveThrough(
 ): Promise<number> {
   let acknowledged = from;
   for (let round = 0; round < 400; round++) {
-    if (round === 5) kill();
     const document = channelDocument({ name: `Saved ${acknowledged + 1}` });
-    const reply = await client
+    const saving = client
       .put(`/api/channels/${channelId}`, { document }, { 'if-match': `"${acknowledged}"` })
       .catch(() => undefined);
-    if (reply?.status === 200) acknowledged = reply.body.version as number;
-    // What was written and whose acknowledgement was lost is found as a newer version.
-    else if (reply?.status === 412) acknowledged = reply.body.current.version as number;
-    else await new Promise((resolve) => setTimeout(resolve, 100));
+    if (round === 5) {
+      await new Promise((resolve) => setTimeout(resolve, 5));
+      kill();
+    }
+    const reply = await saving;
+    if (reply?.status === 200) {
+      expect(reply.body.version).toBe(acknowledged + 1);
+      acknowledged = reply.body.version as number;
+    } else if (reply?.status === 412) {
+      // Only the one save whose answer was lost may have been written without our knowing.
+      expect(reply.body.current.version).toBe(acknowledged + 1);
+      acknowledged = reply.body.current.version as number;
+    } else await new Promise((resolve) => setTimeout(resolve, 100));
     if (round > 8 && reply?.status === 200) return acknowledged;
   }
   throw new Error(`It did not come back:\n${product.output}`);
