@@ -38,3 +38,16 @@ export function twoPortText(lastGhz = 20): string {
   });
   return ['! written for a test', '# GHz S MA R 50', ...rows, ''].join('\n');
 }
+
+/** Matched and uncoupled, losing 0.8 dB x sqrt(f in GHz), 0.5 ns long; through pairs 1-2 and 3-4 for four ports. */
+export function lossyPart(ports: 2 | 4, fromGhz: number, toGhz: number): string {
+  const rows = Array.from({ length: 1001 }, (_unused, k) => {
+    const f = fromGhz + ((toGhz - fromGhz) * k) / 1000;
+    const size = 10 ** ((-0.8 * Math.sqrt(f)) / 20);
+    const turn = -2 * Math.PI * f * 0.5;
+    const s = `${size * Math.cos(turn)} ${size * Math.sin(turn)}`;
+    if (ports === 2) return `${f} 0 0 ${s} ${s} 0 0`;
+    return `${f} ${[`0 0 ${s} 0 0 0 0`, `${s} 0 0 0 0 0 0`, `0 0 0 0 0 0 ${s}`, `0 0 0 0 ${s} 0 0`].join('\n')}`;
+  });
+  return `# GHz S RI R 50\n${rows.join('\n')}\n`;
+}

@@ -37,7 +37,10 @@ export class Product {
     child.stdout.on('data', (part: Buffer) => (text += part.toString()));
     child.stderr.on('data', (part: Buffer) => (text += part.toString()));
     const product = new Product(`http://127.0.0.1:${port}`, dataDirectory, child, () => text);
-    await product.untilHealthy();
+    await product.untilHealthy().catch(async (error: unknown) => {
+      await product.stop();
+      throw error;
+    });
     return product;
   }
 
@@ -73,7 +76,8 @@ export class Product {
   }
 
   async stop(): Promise<void> {
-    const ended = new Promise((resolve) => this.child.once('exit', resolve));
+    const over = this.child.exitCode !== null || this.child.signalCode !== null;
+    const ended = over ? undefined : new Promise((resolve) => this.child.once('exit', resolve));
     this.child.kill('SIGTERM');
     await ended;
     rmSync(this.dataDirectory, { recursive: true, force: true });

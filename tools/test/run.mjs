@@ -139,7 +139,8 @@ async function main() {
   }
   for (const name of skipped) console.log(`skipped  ${name}`);
   for (const failure of failures) console.log(`\n--- ${failure}`);
-  console.log(`${totals.passed} passed, ${totals.failed} failed`);
+  const left = skipped.length ? `, ${skipped.length} skipped` : '';
+  console.log(`${totals.passed} passed, ${totals.failed} failed${left}`);
   process.exit(totals.failed > 0 || failures.length > 0 || totals.passed === 0 ? 1 : 0);
 }
 

@@ -12,6 +12,7 @@ import {
 } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join, resolve } from 'node:path';
+import { lossyPart } from '../../../test/support/fixtures';
 
 // Every run is a process of its own, and the first one bundles.
 jest.setTimeout(60_000);
@@ -186,21 +187,7 @@ const chipMask = [
 function bring(name: string, ports: 2 | 4, fromGhz: number, toGhz: number): void {
   const path = join(measured, name);
   if (existsSync(path)) writeFileSync(join(folder, name), readFileSync(path));
-  else writeFileSync(join(folder, name), lossyFile(ports, fromGhz, toGhz));
-}
-
-/** Matched and uncoupled, losing 0.8 dB x sqrt(f in GHz), 0.5 ns long; through pairs 1-2 and 3-4 for four ports. */
-function lossyFile(ports: 2 | 4, fromGhz: number, toGhz: number): string {
-  const rows = Array.from({ length: 1001 }, (_, k) => {
-    const f = fromGhz + ((toGhz - fromGhz) * k) / 1000;
-    const size = 10 ** ((-0.8 * Math.sqrt(f)) / 20);
-    const turn = -2 * Math.PI * f * 0.5;
-    const s = `${size * Math.cos(turn)} ${size * Math.sin(turn)}`;
-    if (ports === 2) return `${f} 0 0 ${s} ${s} 0 0`;
-    const rowsOfFour = [`0 0 ${s} 0 0 0 0`, `${s} 0 0 0 0 0 0`, `0 0 0 0 0 0 ${s}`, `0 0 0 0 ${s} 0 0`];
-    return `${f} ${rowsOfFour.join('\n')}`;
-  });
-  return `# GHz S RI R 50\n${rows.join('\n')}\n`;
+  else writeFileSync(join(folder, name), lossyPart(ports, fromGhz, toGhz));
 }
 
 describe('measured parts against published masks', () => {

@@ -105,6 +105,11 @@ describe('singular points', () => {
     expect(Math.hypot(s[4]!, s[5]!)).toBeLessThan(1e-14);
   });
 
+  it('a line of the least impedance there is stays finite at 0 Hz', () => {
+    expect(at({ ...line, z0Ohm: 1e-6 }, 0).every(Number.isFinite)).toBe(true);
+    expect(at({ kind: 'attenuator', attenuationDb: 0, z0Ohm: 1e-6 }, 0).every(Number.isFinite)).toBe(true);
+  });
+
   it('a stub in its own impedance is that load wherever one looks', () => {
     const s = at({ ...line, z0Ohm: 50, kind: 'stub', end: 'load', load: { resistanceOhm: 50 } }, 0.7e9);
     expect(s[0]).toBeCloseTo(-1 / 3, 12);

@@ -151,8 +151,16 @@ function interpolated(element: PartElement, network: Network, frequenciesHz: Flo
     return interpolate(network, within, { method: element.interpolation, below: element.below });
   } catch (error) {
     if (!(error instanceof NetworkError)) throw error;
-    throw new ElementError({ path: 'below', message: error.reason, mend: error.mend });
+    throw new ElementError({
+      path: error.at === 'frequenciesHz' && beyondEnd(within, network) ? 'above' : 'below',
+      message: error.reason,
+      mend: error.mend,
+    });
   }
+}
+
+function beyondEnd(wanted: Float64Array, network: Network): boolean {
+  return wanted[wanted.length - 1]! > network.frequenciesHz[network.frequenciesHz.length - 1]!;
 }
 
 /** A grid's end computed by another route may miss the band's end by a rounding: it is that end. */
@@ -174,7 +182,7 @@ function partWarnings({ file }: ElementPart): readonly string[] {
     const { passivity } = assessQuality(file.network);
     if (passivity.failingPoints > 0) {
       words.push(
-        `${file.fileName} is not passive at ${passivity.failingPoints} points (worst singular value ${passivity.worst.singularValue.toFixed(4)} at ${(passivity.worst.frequencyHz / 1e9).toPrecision(4)} GHz, graded ${passivity.grade}).`,
+        `${file.fileName} is not passive at ${passivity.failingPoints} ${passivity.failingPoints === 1 ? 'point' : 'points'} (worst singular value ${passivity.worst.singularValue.toFixed(4)} at ${(passivity.worst.frequencyHz / 1e9).toPrecision(4)} GHz, graded ${passivity.grade}).`,
       );
     }
   }

@@ -56,6 +56,13 @@ describe('the channel file', () => {
     ]);
   });
 
+  it('refuses an impedance so small that it is a short', () => {
+    const line = { ...minimal.elements[0], z0Ohm: 1e-18 };
+    expect(problems({ ...minimal, elements: [line] })[0]).toMatchObject({ path: 'elements[0].z0Ohm' });
+    expect(problems({ ...minimal, referenceOhm: 1e-18 })[0]).toMatchObject({ path: 'referenceOhm' });
+    expect(problems({ ...minimal, elements: [{ ...line, z0Ohm: 1e-6 }] })).toEqual([]);
+  });
+
   it('names the field and what would be right', () => {
     const broken = {
       ...minimal,

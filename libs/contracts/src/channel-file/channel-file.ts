@@ -25,13 +25,7 @@ export type ChannelElement = z.output<typeof element>;
 export type ElementKind = ChannelElement['kind'];
 export type ElementOf<Kind extends ElementKind> = Extract<ChannelElement, { kind: Kind }>;
 
-const ohms = quantity({
-  dimension: 'resistance',
-  label: 'Reference impedance',
-  unit: 'ohm',
-  above: 0,
-  max: 1e6,
-});
+const ohms = field.impedance('Reference impedance');
 const reactance = quantity({
   dimension: 'resistance',
   label: 'Imaginary part',

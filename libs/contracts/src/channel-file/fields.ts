@@ -1,5 +1,8 @@
 import { quantity, type QuantityField } from '../quantity';
 
+/** Below this an impedance is a short and not a line: reflections in it would be 0/0 at 0 Hz. */
+const leastOhm = 1e-6;
+
 /** The quantities elements share; a bound is written here once for schema, form and JSON Schema. */
 type Extra = Partial<QuantityField>;
 
@@ -7,7 +10,7 @@ export const length = (label = 'Length', extra: Extra = {}) =>
   quantity({ dimension: 'length', label, unit: 'mm', min: 0, max: 1_000, ...extra });
 
 export const impedance = (label = 'Characteristic impedance') =>
-  quantity({ dimension: 'resistance', label, unit: 'ohm', above: 0, max: 1e6 });
+  quantity({ dimension: 'resistance', label, unit: 'ohm', min: leastOhm, max: 1e6 });
 
 export const resistance = (label = 'Resistance') =>
   quantity({ dimension: 'resistance', label, unit: 'ohm', min: 0, max: 1e15 });
