@@ -16,6 +16,10 @@ export class TestClient {
 
   constructor(readonly origin: string) {}
 
+  get csrfToken(): string {
+    return this.token;
+  }
+
   get cookieHeader(): string {
     return this.cookie;
   }

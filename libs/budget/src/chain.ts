@@ -20,7 +20,7 @@ import {
 import canonicalize from 'canonicalize';
 import type { CheckCache } from './cache';
 import type { Part } from './check.types';
-import { ofElement } from './problem';
+import { CheckAbandoned, ofElement } from './problem';
 import { jointOhmOf, portsOf, referencesOf } from './references';
 
 /** Kinds that stand once in each leg of a pair, alike and without coupling. */
@@ -43,6 +43,8 @@ export interface Chain {
   readonly sectionReference: Float64Array;
   readonly coverage: readonly Coverage[];
   readonly cache?: CheckCache;
+  /** Asked before each element is built: true ends the check. */
+  readonly abandoned?: () => boolean;
 }
 
 /** @throws CheckRefused where a part contradicts its element */
@@ -50,6 +52,7 @@ export function createChain(
   channel: CompleteChannel,
   parts: ReadonlyMap<string, Part>,
   cache?: CheckCache,
+  abandoned?: () => boolean,
 ): Chain {
   const reference = referencesOf(channel);
   const ports = portsOf(channel);
@@ -64,7 +67,7 @@ export function createChain(
     ofElement(i, () => elementCoverage(element, context)),
   );
   const sectionPorts = oneLeg ? 2 : ports;
-  return { channel, context, ports, sectionPorts, reference, sectionReference, coverage, cache };
+  return { channel, context, ports, sectionPorts, reference, sectionReference, coverage, cache, abandoned };
 }
 
 /** Every element on these frequencies (ascending, inside the coverage), one after the other; `cached` uses the cache. */
@@ -78,6 +81,7 @@ export function* sectionsOf(
   const shared = cache ? `${cache.gridKey(frequenciesHz)} ${context.jointOhm} ${context.signaling}` : '';
   const stackup = cache ? (canonicalize(channel.stackup ?? null) ?? '') : '';
   for (const [i, element] of channel.elements.entries()) {
+    if (chain.abandoned?.()) throw new CheckAbandoned();
     const key = cache ? `${shared} ${keyOf(element, context, stackup)}` : '';
     const built = cache?.get(key) ?? ofElement(i, () => buildElement(element, frequenciesHz, context));
     cache?.set(key, built);

@@ -1,5 +1,6 @@
 import {
   canonicalBytes,
+  CheckAbandoned,
   checkChannel,
   createCheckCache,
   readChannel,
@@ -212,5 +213,17 @@ describe('the canonical bytes', () => {
     const fileId = channelOf({ elements: [{ kind: 'touchstone', fileId: id }] });
     expect(text(file, { 'a.s2p': { sha256: 'aa' } })).toBe(text(fileId, { [id]: { sha256: 'aa' } }));
     expect(text(file, { 'a.s2p': { sha256: 'bb' } })).not.toBe(text(fileId, { [id]: { sha256: 'aa' } }));
+  });
+});
+
+describe('a check that is no longer wanted', () => {
+  it('ends before the next element, and is whole again when asked anew', () => {
+    const read = readChannel(channelOf({ elements: [line, line, line] }));
+    if (!read.ok) throw new Error(JSON.stringify(read.problems));
+    let asked = 0;
+    const abandoned = () => ++asked > 2;
+    expect(() => checkChannel(read.channel, new Map(), { abandoned })).toThrow(CheckAbandoned);
+    expect(asked).toBe(3);
+    expect(checkChannel(read.channel, new Map()).ok).toBe(true);
   });
 });

@@ -19,15 +19,17 @@ const worthKeeping = 200;
  * Frequencies that some part does not cover are left out; a limit there is not judged and says what is missing.
  * @param parts by the element's `file` or `fileId`
  * @param options.cache keeps elements from check to check
+ * @param options.abandoned asked before each element: true ends the check
+ * @throws CheckAbandoned
  */
 export function checkChannel(
   channel: CompleteChannel,
   parts: ReadonlyMap<string, Part>,
-  options: { cache?: CheckCache } = {},
+  options: { cache?: CheckCache; abandoned?: () => boolean } = {},
 ): CheckResult {
   try {
     refuseMissingParts(channel, parts);
-    return { ok: true, check: checked(createChain(channel, parts, options.cache)) };
+    return { ok: true, check: checked(createChain(channel, parts, options.cache, options.abandoned)) };
   } catch (error) {
     if (error instanceof CheckRefused) return { ok: false, problems: error.problems };
     if (error instanceof NetworkError) {

@@ -11,6 +11,14 @@ export class CheckRefused extends Error {
   }
 }
 
+/** Thrown out of a check whose caller no longer wants it. */
+export class CheckAbandoned extends Error {
+  constructor() {
+    super('The check was abandoned.');
+    this.name = 'CheckAbandoned';
+  }
+}
+
 /** Runs something of element `index`; what the element or the algebra refuses is told with its path in the channel. */
 export function ofElement<Result>(index: number, run: () => Result): Result {
   try {

@@ -1,6 +1,7 @@
 import { existsSync } from 'node:fs';
 import { fileURLToPath } from 'node:url';
 import { Piscina } from 'piscina';
+import { problems } from '../../platform/http';
 import { errorFacts, log } from '../../platform/log';
 import { CheckQueue } from './check-queue';
 import type { CheckOutcome, CheckTask, TaskResult } from './check-task';
@@ -34,9 +35,9 @@ export class CheckPool {
   }
 
   /** @throws Uncheckable with paths in the channel; HttpProblem superseded where a newer check took the place */
-  async run(person: string, key: string | undefined, task: CheckTask): Promise<CheckOutcome> {
-    const result = await this.queue.add(person, key, () => this.pool.run(task));
-    if (!result.ok) throw new Uncheckable(result.problems);
+  async run(person: string, key: string | undefined, task: Omit<CheckTask, 'flag'>): Promise<CheckOutcome> {
+    const result = await this.queue.add(person, key, (flag) => this.pool.run({ ...task, flag }));
+    if (!result.ok) throw result.superseded ? problems.superseded() : new Uncheckable(result.problems);
     if (task.form === 'view') this.remember(result.outcome);
     return result.outcome;
   }

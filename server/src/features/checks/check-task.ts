@@ -15,6 +15,8 @@ export interface CheckTask {
   readonly dataDirectory: string;
   /** What is wanted: what the screen draws, or the whole response. */
   readonly form: 'view' | 'response';
+  /** One shared number, not 0 once a newer check has taken this one's place. */
+  readonly flag: Int32Array<SharedArrayBuffer>;
 }
 
 /** Columns that lists and filters need of a check. */
@@ -35,6 +37,8 @@ export interface CheckOutcome {
   readonly json: string;
 }
 
+/** `superseded`: the flag was raised, and the thread left off. */
 export type TaskResult =
+  | { readonly ok: false; readonly superseded: true }
   | { readonly ok: true; readonly outcome: CheckOutcome }
-  | { readonly ok: false; readonly problems: readonly FieldProblem[] };
+  | { readonly ok: false; readonly superseded: false; readonly problems: readonly FieldProblem[] };

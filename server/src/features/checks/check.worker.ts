@@ -1,5 +1,6 @@
 import { createHash } from 'node:crypto';
 import {
+  CheckAbandoned,
   canonicalBytes,
   checkChannel,
   createCheckCache,
@@ -23,8 +24,18 @@ export default async function runCheck(task: CheckTask): Promise<TaskResult> {
   const store = new FileStore(task.dataDirectory);
   const parts = new Map<string, Part>();
   for (const part of task.parts) parts.set(part.key, await hold(store, part));
-  const result = checkChannel(task.channel, parts, { cache });
-  if (!result.ok) return result;
+  try {
+    return outcomeOf(task, parts);
+  } catch (error) {
+    if (error instanceof CheckAbandoned) return { ok: false, superseded: true };
+    throw error;
+  }
+}
+
+function outcomeOf(task: CheckTask, parts: ReadonlyMap<string, Part>): TaskResult {
+  const abandoned = () => Atomics.load(task.flag, 0) !== 0;
+  const result = checkChannel(task.channel, parts, { cache, abandoned });
+  if (!result.ok) return { ...result, superseded: false };
   const fingerprint = createHash('sha256').update(canonicalBytes(task.channel, parts)).digest('hex');
   const view = toView(result.check, fingerprint);
   const json = JSON.stringify(task.form === 'view' ? view : toResponse(result.check, fingerprint));
