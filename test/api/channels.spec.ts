@@ -1,9 +1,9 @@
 import { execFileSync } from 'node:child_process';
 import { readdirSync, writeFileSync } from 'node:fs';
-import { request, type ClientRequest } from 'node:http';
 import { join } from 'node:path';
 import { TestServer } from '../support/server';
 import type { TestClient } from '../support/client';
+import { rawUpload } from '../support/raw-upload';
 import { channelDocument, limit, line, twoPortText } from '../support/fixtures';
 
 let server: TestServer;
@@ -33,38 +33,11 @@ function save(id: string, version: number, document: unknown, client = engineer)
 }
 
 async function upload(name: string, text: string) {
-  return engineer.post(`/api/boards/${boardId}/files?name=${name}`, text);
+  return engineer.post(path(name), text);
 }
 
-/** An upload whose head and body are written by hand. */
-function raw(
-  name: string,
-  length: string,
-  send: (request: ClientRequest) => void,
-): Promise<{ status: number; reply: string }> {
-  return new Promise((resolve, reject) => {
-    const headers = {
-      cookie: engineer.cookieHeader,
-      origin: server.origin,
-      'x-csrf-token': engineer.csrfToken,
-      'content-type': 'application/octet-stream',
-      'content-length': length,
-    };
-    const outgoing = request(
-      `${server.origin}/api/boards/${boardId}/files?name=${name}`,
-      { method: 'POST', headers },
-      (response) => {
-        let reply = '';
-        response.on('data', (part: Buffer) => (reply += part.toString()));
-        response.on('end', () => {
-          outgoing.destroy();
-          resolve({ status: response.statusCode ?? 0, reply });
-        });
-      },
-    );
-    outgoing.on('error', reject);
-    send(outgoing);
-  });
+function path(name: string): string {
+  return `/api/boards/${boardId}/files?name=${name}`;
 }
 
 /** The node's own runner may have taken the job: waits for what it leaves. */
@@ -257,8 +230,12 @@ describe('a part', () => {
   });
 
   it('announced larger than 64 MB is refused before it is read', async () => {
-    const { status, reply } = await raw('x.s2p', String(65 * 1024 * 1024), (request) =>
-      request.flushHeaders(),
+    const { status, reply } = await rawUpload(
+      server.origin,
+      engineer,
+      path('x.s2p'),
+      String(65 * 1024 * 1024),
+      (request) => request.flushHeaders(),
     );
     expect(status).toBe(413);
     expect(JSON.parse(reply)).toMatchObject({ id: 'too-large' });
@@ -267,7 +244,7 @@ describe('a part', () => {
 
   it('that breaks off on its way leaves nothing behind', async () => {
     const before = (await engineer.get(`/api/boards/${boardId}/files`)).body.items.length;
-    await raw('half.s2p', '1000', (request) => {
+    await rawUpload(server.origin, engineer, path('half.s2p'), '1000', (request) => {
       request.write('# GHz S RI R 50\n1 0 0 1 0 1 0 0 0\n');
       setTimeout(() => request.destroy(), 200);
     }).catch(() => undefined);
