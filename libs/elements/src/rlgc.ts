@@ -19,15 +19,34 @@ export function rlgcInto(
   referenceOhm: number,
 ): void {
   const w = 2 * Math.PI * frequencyHz;
-  const zRe = line.resistanceOhmPerM;
-  const zIm = w * line.inductanceHPerM;
-  const yRe = line.conductanceSPerM;
-  const yIm = w * line.capacitanceFPerM;
-  const square = line.lengthM * line.lengthM;
+  immittanceLineInto(
+    out,
+    at,
+    line.resistanceOhmPerM,
+    w * line.inductanceHPerM,
+    line.conductanceSPerM,
+    w * line.capacitanceFPerM,
+    line.lengthM,
+    referenceOhm,
+  );
+}
+
+/** The same from series impedance z (ohm/m) and shunt admittance y (S/m) at one frequency, and a length in metres. */
+export function immittanceLineInto(
+  out: Float64Array,
+  at: number,
+  zRe: number,
+  zIm: number,
+  yRe: number,
+  yIm: number,
+  lengthM: number,
+  referenceOhm: number,
+): void {
+  const square = lengthM * lengthM;
   const gRe2 = (zRe * yRe - zIm * yIm) * square;
   const gIm2 = (zRe * yIm + zIm * yRe) * square;
   if (Math.hypot(gRe2, gIm2) < shortSquare) {
-    shortInto(out, at, [zRe, zIm, yRe, yIm], line.lengthM, referenceOhm, gRe2, gIm2);
+    shortInto(out, at, [zRe, zIm, yRe, yIm], lengthM, referenceOhm, gRe2, gIm2);
     return;
   }
   complexSqrt(root, 0, zRe * yRe - zIm * yIm, zRe * yIm + zIm * yRe);
@@ -41,7 +60,7 @@ export function rlgcInto(
   const sum = sumRe * sumRe + zcIm * zcIm;
   const gRe = ((zcRe - referenceOhm) * sumRe + zcIm * zcIm) / sum;
   const gIm = (zcIm * sumRe - (zcRe - referenceOhm) * zcIm) / sum;
-  passInto(out, at, gRe, gIm, gammaRe * line.lengthM, gammaIm * line.lengthM);
+  passInto(out, at, gRe, gIm, gammaRe * lengthM, gammaIm * lengthM);
 }
 
 /** With g = (gamma l)^2: A = cosh, B = z l sinh(gamma l)/(gamma l), C = y l sinh(gamma l)/(gamma l); S from ABCD (Frickey, 1994). */
