@@ -3,6 +3,7 @@ import { cascade2Into, cascade4Into } from '@tollgate/network';
 import { pairOfLegs } from './legs';
 import { isPair, pairPort } from './pair';
 import { buildPart, partCoverage, partKey } from './part';
+import { buildTrace } from './trace';
 import { isTwoPort, twoPort } from './two-port';
 import { ElementError, type BuildContext, type BuiltElement, type ElementCoverage } from './types';
 
@@ -41,6 +42,7 @@ export function buildElement(
       ? buildCircuit(element.circuit, frequenciesHz, context)
       : buildPart(element, frequenciesHz, context);
   }
+  if (element.kind === 'trace') return buildTrace(element, frequenciesHz, context);
   return { s: circuitKind(element, frequenciesHz, context), warnings: [] };
 }
 

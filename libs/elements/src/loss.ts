@@ -4,6 +4,7 @@ import { buildElement } from './element';
 import { lightSpeedMPerS } from './constants';
 import { lineLossDb } from './line';
 import { modesOfCoupledLine } from './pair';
+import { traceDelayS, traceTollDb } from './trace';
 import type { BuildContext } from './types';
 
 /**
@@ -13,7 +14,7 @@ import type { BuildContext } from './types';
 export function elementTollDb(
   element: ChannelElement,
   frequenciesHz: Float64Array,
-  _context: BuildContext,
+  context: BuildContext,
 ): Float64Array | undefined {
   if (element.kind === 'line') return frequenciesHz.map((f) => lineLossDb(element, f));
   if (element.kind === 'coupled-line') {
@@ -21,6 +22,7 @@ export function elementTollDb(
     return frequenciesHz.map((f) => lineLossDb(odd, f));
   }
   if (element.kind === 'attenuator') return frequenciesHz.map(() => element.attenuationDb);
+  if (element.kind === 'trace') return traceTollDb(element, frequenciesHz, context);
   return undefined;
 }
 
@@ -43,6 +45,8 @@ export function elementDelayS(element: ChannelElement, context: BuildContext): n
       );
     case 'rlgc-line':
       return element.lengthM * Math.sqrt(element.inductanceHPerM * element.capacitanceFPerM);
+    case 'trace':
+      return traceDelayS(element, context);
     case 'budget-loss':
       return element.delayS ?? 0;
     case 'touchstone':

@@ -1,12 +1,13 @@
 import { kindDescription, type ChannelElement, type Signaling, type Stackup } from '@tollgate/contracts';
 import type { PartElement } from './part';
+import { traceProblems } from './trace';
 import type { ElementProblem } from './types';
 
 /** What can be said of an element before its parts are at hand. */
 export function elementProblems(
   element: ChannelElement,
   signaling: Signaling,
-  _stackup?: Stackup,
+  stackup?: Stackup,
 ): ElementProblem[] {
   const { use, title } = kindDescription(element.kind);
   if (use !== 'both' && use !== signaling) {
@@ -20,6 +21,7 @@ export function elementProblems(
   }
   switch (element.kind) {
     case 'trace':
+      return traceProblems(element, signaling, stackup);
     case 'via':
       return [
         {

@@ -5,21 +5,23 @@ import {
   type Standing,
   type Stackup,
 } from '@tollgate/contracts';
+import { traceStanding } from './trace';
 
 /** The standing the kind allows, lowered (never raised) by what the element states; and why. */
 export function elementStanding(
   element: ChannelElement,
-  _stackup?: Stackup,
+  stackup?: Stackup,
 ): { standing: Standing; reason: string } {
-  const allowed = allowedStanding(element);
+  const allowed = allowedStanding(element, stackup);
   const stated = element.standing;
   if (stated === undefined || standings.indexOf(stated) < standings.indexOf(allowed.standing)) return allowed;
   return stated === allowed.standing ? allowed : { standing: stated, reason: 'lowered by the engineer' };
 }
 
-function allowedStanding(element: ChannelElement): { standing: Standing; reason: string } {
+function allowedStanding(element: ChannelElement, stackup?: Stackup): { standing: Standing; reason: string } {
   switch (element.kind) {
     case 'trace':
+      return traceStanding(element, stackup);
     case 'via':
       return { standing: 'estimated', reason: 'closed form' };
     case 'budget-loss':
