@@ -32,13 +32,22 @@ function overall(view: CheckView): string {
 function limitLine(limit: LimitView): string {
   const status = limit.status ? `, ${limit.status} limit` : '';
   const head = `${limit.title} (${limit.quantity}): ${wordsOf(limit.verdict)}${status}`;
-  const { worstRefined } = limit;
+  const worst = limit.corner ?? limit.worstRefined;
   const margin =
-    worstRefined === null || worstRefined.marginDb === null
+    worst === null || worst.marginDb === null
       ? ''
-      : `worst margin ${marginWords(limit, worstRefined.marginDb)} at ${ghz(worstRefined.frequencyHz)}`;
-  if (limit.verdict !== 'not-judged') return margin ? `${head}, ${margin}.` : `${head}.`;
+      : `worst margin ${marginWords(limit, worst.marginDb)} at ${ghz(worst.frequencyHz)}`;
+  const basis = limit.corner ? cornerWords(limit, limit.corner) : ', nominal';
+  if (limit.verdict !== 'not-judged') return margin ? `${head}, ${margin}${basis}.` : `${head}.`;
   return `${head}. ${limit.reason}${margin ? ` Over what is covered: ${margin}.` : ''}`;
+}
+
+/** Where the stackup has tolerances: the corner the verdict stands on, and the nominal margin beside it. */
+function cornerWords(limit: LimitView, { name, drivenBy }: NonNullable<LimitView['corner']>): string {
+  const nominal = limit.worstRefined?.marginDb ?? null;
+  const driven = drivenBy ? `, driven by ${drivenBy}` : '';
+  const beside = nominal === null ? '' : ` (nominal ${marginWords(limit, nominal)})`;
+  return ` in the corner ${name}${driven}${beside}`;
 }
 
 function marginWords({ quantity }: LimitView, margin: number): string {

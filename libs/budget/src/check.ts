@@ -4,6 +4,7 @@ import { commonBand, compileMask, judgeLimit, spokenHz, type Coverage, type Subj
 import { NetworkError, toMixedMode, type Network } from '@tollgate/network';
 import type { CheckCache } from './cache';
 import { cautionsOf } from './cautions';
+import { withCorners } from './corners/judge-corners';
 import { createChain, evaluateChain, type Chain, type Evaluation } from './chain';
 import type { Check, CheckResult, JudgedLimit, Part } from './check.types';
 import { gridOf } from './grid';
@@ -60,7 +61,18 @@ function checked(chain: Chain): Check {
   const grid = gridOf(channel, delayS);
   const covered = grid.frequenciesHz.filter((f) => f >= band[0] && f <= band[1]);
   const { network, facts, trappedPoints } = evaluateChain(chain, covered, true);
-  const limits = judgeAll(chain, network, grid.frequenciesHz);
+  const varied = (other: CompleteChannel): Chain => ({
+    ...chain,
+    channel: other,
+    context: { ...context, stackup: other.stackup },
+  });
+  const limits = withCorners(channel, judgeAll(channel, subjectOf(chain, network, grid.frequenciesHz)), {
+    judge: (other) => {
+      const { network: at } = evaluateChain(varied(other), covered, true);
+      return judgeAll(other, subjectOf(varied(other), at, grid.frequenciesHz));
+    },
+    subjectOf: (other) => subjectOf(varied(other), network, grid.frequenciesHz),
+  });
   return {
     channel,
     network,
@@ -82,9 +94,9 @@ function checked(chain: Chain): Check {
   };
 }
 
-function judgeAll(chain: Chain, network: Network, gridHz: Float64Array): JudgedLimit[] {
+function subjectOf(chain: Chain, network: Network, gridHz: Float64Array): Subject {
   const { channel } = chain;
-  const subject: Subject = {
+  return {
     signaling: channel.signaling,
     from: channel.from,
     to: channel.to,
@@ -94,6 +106,9 @@ function judgeAll(chain: Chain, network: Network, gridHz: Float64Array): JudgedL
     evaluate: (frequenciesHz) =>
       evaluateChain(chain, frequenciesHz, frequenciesHz.length >= worthKeeping).network,
   };
+}
+
+function judgeAll(channel: CompleteChannel, subject: Subject): JudgedLimit[] {
   return channel.limits.map((limit, i) => {
     const compiled = compileMask(limit, `limits[${i}]`);
     if (!compiled.ok) throw new CheckRefused([...compiled.problems]);

@@ -24,8 +24,8 @@ export function toResponse(check: Check, fingerprint: string): ChannelResponse {
 
 /** What the contract says of a limit, without what only a drawing needs. */
 export function limitResultOf({ judgement }: JudgedLimit): LimitResult {
-  const { id, verdict, holds, reason, worst, worstRefined, exceedsHz } = judgement;
-  return { id, verdict, holds, reason, worst, worstRefined, exceedsHz };
+  const { id, verdict, holds, reason, worst, worstRefined, exceedsHz, corner } = judgement;
+  return { id, verdict, holds, reason, worst, worstRefined, exceedsHz, ...(corner ? { corner } : {}) };
 }
 
 function referencePairs(network: Network): [number, number][] {

@@ -50,9 +50,10 @@ export function verdictOf(check: Pick<Check, 'limits'>): ChannelVerdict {
   return verdicts.length === 0 || verdicts.includes('not-judged') ? 'not-judged' : 'holds';
 }
 
-/** The least refined margin over the limits that were judged; limits on time (seconds) do not compare and are left out. */
+/** The least refined margin, at the worst corner where there are any, over the limits that were judged; limits on time (seconds) do not compare and are left out. */
 function worstOf(check: Check): { id: string; frequencyHz: number; marginDb: number } | undefined {
-  const margins = check.limits.flatMap(({ judgement: { id, verdict, worstRefined } }, i) => {
+  const margins = check.limits.flatMap(({ judgement: { id, verdict, ...judgement } }, i) => {
+    const worstRefined = judgement.corner ?? judgement.worstRefined;
     const inSeconds = ['delay', 'pair-skew'].includes(check.channel.limits[i]!.quantity);
     if (verdict === 'not-judged' || inSeconds || !worstRefined || worstRefined.marginDb === null) return [];
     return { id, frequencyHz: worstRefined.frequencyHz, marginDb: worstRefined.marginDb };

@@ -49,6 +49,18 @@ export function judgeLimit(limit: Limit & { id: string }, mask: Mask, subject: S
   };
 }
 
+/**
+ * The margin against a limit at one frequency inside its range and the parts' band, dB or seconds; null where the limit, its
+ * fit or the value has no number there.
+ */
+export function marginAt(limit: Limit, mask: Mask, subject: Subject, frequencyHz: number): number | null {
+  const measure = measureOf(limit, subject);
+  const fitted = isFit(limit) ? withFit(limit, measure, subject) : measure;
+  const bound = limitAt(mask, limit.sense, frequencyHz);
+  if ('reason' in fitted || bound === null) return null;
+  return finiteOrNull(marginOf(limit.sense, bound, fitted.at(Float64Array.of(frequencyHz))[0]!));
+}
+
 function blankOf(id: string, referenceOhm: number): Judgement {
   const nothing = { worst: null, worstRefined: null, exceedsHz: [], missingHz: [], valueDb: [] };
   return { id, verdict: 'not-judged', holds: false, reason: '', referenceOhm, ...nothing };

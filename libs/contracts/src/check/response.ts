@@ -9,6 +9,18 @@ const matrix = z.array(z.array(complexNumber));
 const decibels = z.number().nullable();
 const margin = z.object({ frequencyHz: z.number(), marginDb: decibels });
 
+export const cornerNames = ['nominal', 'most-loss', 'lowest-impedance', 'highest-impedance'] as const;
+/** An end of the stackup's tolerances. */
+export type CornerName = (typeof cornerNames)[number];
+
+/** The corner of the stackup's tolerances at which a limit has least margin, and which tolerance takes most of it. */
+export const cornerResult = margin.extend({
+  name: z.enum(cornerNames),
+  /** A quantity of a layer; empty at the nominal corner. */
+  drivenBy: z.string(),
+});
+export type CornerResult = z.output<typeof cornerResult>;
+
 export const limitResult = z.object({
   id: z.string(),
   verdict: z.enum(limitVerdicts),
@@ -20,6 +32,8 @@ export const limitResult = z.object({
   /** Of the engine between the grid's points too; what screens and reports show. */
   worstRefined: margin.nullable(),
   exceedsHz: z.array(z.tuple([z.number(), z.number()])),
+  /** Where the stackup carries tolerances: verdict and `holds` stand on it. Absent where the verdict is a nominal one. */
+  corner: cornerResult.optional(),
 });
 export type LimitResult = z.output<typeof limitResult>;
 

@@ -82,13 +82,13 @@ function verdict(pdf: PDFKit.PDFDocument, view: CheckView): void {
 }
 
 function limitRow(limit: LimitView): string[] {
-  const worst = limit.worstRefined;
+  const worst = limit.corner ?? limit.worstRefined;
   const status = limit.status && limit.status !== 'normative' ? `, ${limit.status} limit` : '';
   return [
     [limit.title, limit.source].filter(Boolean).join('\n'),
     limit.verdict === 'not-judged'
       ? `Not judged: ${limit.reason}`
-      : `${verdictWords[limit.verdict]}${status}`,
+      : `${verdictWords[limit.verdict]}${status}\n${limit.corner ? `worst corner: ${limit.corner.name}` : 'nominal'}`,
     worst ? formatQuantity(worst.frequencyHz, 'frequency', { digits: 5 }) : '',
     worst ? formatDb(worst.marginDb) : '',
   ];

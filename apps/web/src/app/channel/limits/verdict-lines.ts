@@ -20,7 +20,26 @@ export function quantityTitle(quantity: LimitView['quantity']): string {
 
 /** `1.84 dB left at 12.9 GHz`, or `0.31 dB over at 4 GHz`; times are in seconds behind the same field. */
 export function marginWords(limit: LimitView): string {
-  const at = limit.worstRefined ?? limit.worst;
+  return wordsOf(limit, limit.corner ?? limit.worstRefined ?? limit.worst);
+}
+
+const cornerWord: Readonly<Record<NonNullable<LimitView['corner']>['name'], string>> = {
+  nominal: 'the nominal stackup',
+  'most-loss': 'most loss',
+  'lowest-impedance': 'lowest impedance',
+  'highest-impedance': 'highest impedance',
+};
+
+/** On which end of the stackup's tolerances the verdict stands, what drives it there, and what the nominal stackup gives. */
+export function cornerWords(limit: LimitView): string {
+  if (limit.verdict === 'not-judged') return '';
+  if (!limit.corner) return 'Nominal: no tolerances of the stackup enter.';
+  const { name, drivenBy } = limit.corner;
+  const driven = drivenBy ? `, driven by ${drivenBy}` : '';
+  return `Worst at ${cornerWord[name]}${driven}; nominal ${wordsOf(limit, limit.worstRefined)}.`;
+}
+
+function wordsOf(limit: LimitView, at: LimitView['worst']): string {
   if (!at) return '';
   if (limit.quantity === 'delay' || limit.quantity === 'pair-skew') {
     const margin = at.marginDb ?? 0;

@@ -1,7 +1,7 @@
 import { ChangeDetectionStrategy, Component, computed, inject } from '@angular/core';
 import { Verdict } from '../../marks/verdict';
 import { CheckRunner } from '../document/check-runner';
-import { limitFacts, marginWords, rangesWords, sourceWords } from './verdict-lines';
+import { cornerWords, limitFacts, marginWords, rangesWords, sourceWords } from './verdict-lines';
 
 /** What each limit came to, what was not judged, and what to be careful about. */
 @Component({
@@ -18,6 +18,7 @@ export class Verdicts {
     (this.check.view()?.limits ?? []).map((limit) => ({
       limit,
       margin: marginWords(limit),
+      corner: cornerWords(limit),
       facts: limitFacts(limit),
       missing: rangesWords(limit.missingHz),
       exceeds: rangesWords(limit.exceedsHz),
