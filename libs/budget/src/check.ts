@@ -11,6 +11,7 @@ import { gridOf } from './grid';
 import { ledgersOf } from './ledger';
 import { CheckRefused, ofElement } from './problem';
 import { partsNeeded } from './read';
+import { spoilsOf } from './spoils';
 
 /** From this many frequencies on, building them again for a later check costs more than keeping them. */
 const worthKeeping = 200;
@@ -79,6 +80,7 @@ function checked(chain: Chain): Check {
     ...(network.ports === 4 ? { mixedMode: toMixedMode(network) } : {}),
     limits,
     ledger: ledgersOf(chain, limits, delayS),
+    spoils: spoilsOf(chain, limits, delayS),
     lines: linesOf(channel, facts),
     standings: channel.elements.map((element) => ({
       element: element.id,

@@ -3,6 +3,7 @@ import type {
   CompleteChannel,
   FieldProblem,
   Ledger,
+  Spoils,
   Standing,
   Warning,
 } from '@tollgate/contracts';
@@ -34,6 +35,7 @@ export interface Check {
   /** In the order of the channel's limits. */
   readonly limits: readonly JudgedLimit[];
   readonly ledger: readonly Ledger[];
+  readonly spoils: readonly Spoils[];
   readonly lines: ChannelResponse['lines'];
   readonly standings: readonly ElementStanding[];
   readonly warnings: readonly Warning[];

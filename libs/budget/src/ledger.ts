@@ -1,11 +1,10 @@
 import { evaluationHz, type Ledger, type LedgerRow } from '@tollgate/contracts';
 import { commonBand, limitAt } from '@tollgate/masks';
-import { leaveOneOutInto, lossDb, prefixCascades, suffixCascades, uniformReference } from '@tollgate/network';
-import { atReference, sectionsOf, tollOfSection, type Chain } from './chain';
+import { uniformReference } from '@tollgate/network';
+import { tollOfSection, type Chain } from './chain';
 import type { JudgedLimit } from './check.types';
+import { finiteOrNull, leaveOneOut, sectionsAt, spreadAround, throughLoss } from './leave-one-out';
 
-/** Points at which `saved if ideal` is looked at around a ledger's frequency. */
-const spreadPoints = 33;
 /** A reflection this small is rounding, dB. */
 const rounding = 1e-10;
 
@@ -59,20 +58,22 @@ function ledgerAt(chain: Chain, spot: LedgerSpot, delayS: number): Ledger {
   const { atHz } = spot;
   const frequenciesHz = spreadAround(chain, atHz, delayS);
   const here = frequenciesHz.indexOf(atHz);
-  const losses = lossesAround(chain, frequenciesHz, spot.reference);
+  const sections = sectionsAt(chain, frequenciesHz);
+  const losses = leaveOneOut(chain, sections, frequenciesHz, spot.reference, throughLoss);
+  const tolls = sections.map((section, i) => tollOfSection(chain, i, section, frequenciesHz));
   const totalDb = losses.all[here]!;
   const elements = chain.channel.elements;
   const rows = elements.map((element, i): LedgerRow => {
     const saved = losses.without[i]!.map((lossDb, k) => losses.all[k]! - lossDb);
     return {
       element: element.id,
-      tollDb: finiteOrNull(losses.tolls[i]![here]!),
+      tollDb: finiteOrNull(tolls[i]![here]!),
       savedIfIdealDb: finiteOrNull(saved[here]!),
       savedRangeDb: [finiteOrNull(Math.min(...saved)), finiteOrNull(Math.max(...saved))],
       ...(spot.allotted && element.allotmentDb !== undefined ? { allotmentDb: element.allotmentDb } : {}),
     };
   });
-  const reflection = totalDb - losses.tolls.reduce((sum, tolls) => sum + tolls[here]!, 0);
+  const reflection = totalDb - tolls.reduce((sum, toll) => sum + toll[here]!, 0);
   const reserveDb = spot.allotted ? reserveOf(chain, spot.limitDb) : undefined;
   return {
     atHz,
@@ -94,66 +95,4 @@ function reserveOf({ channel }: Chain, limitDb: number | null | undefined): numb
   ];
   const given = allotments.filter((allotment) => allotment !== undefined);
   return given.length ? given.reduce((left, allotment) => left - allotment, limitDb) : undefined;
-}
-
-/** The frequency itself and points within half a turn of the channel's delay to both sides, inside the parts' band. */
-function spreadAround(chain: Chain, atHz: number, delayS: number): Float64Array {
-  if (!(delayS > 0)) return Float64Array.of(atHz);
-  const reach = 1 / (2 * delayS);
-  const [bandFrom, bandTo] = commonBand(chain.coverage) ?? [0, Infinity];
-  const from = Math.max(bandFrom, atHz - reach);
-  const to = Math.min(bandTo, atHz + reach);
-  const points = new Set([atHz]);
-  for (let k = 0; k < spreadPoints; k++) {
-    points.add(k === spreadPoints - 1 ? to : from + ((to - from) * k) / (spreadPoints - 1));
-  }
-  return Float64Array.from(points).sort();
-}
-
-interface Losses {
-  /** Of the channel, by frequency. */
-  readonly all: Float64Array;
-  /** Of the channel without each element. */
-  readonly without: Float64Array[];
-  /** Of each element by itself. */
-  readonly tolls: Float64Array[];
-}
-
-function lossesAround(chain: Chain, frequenciesHz: Float64Array, reference: Float64Array): Losses {
-  const points = frequenciesHz.length;
-  const ports = chain.sectionPorts;
-  const sections = Array.from(sectionsOf(chain, frequenciesHz, false), ({ s }) => s);
-  const prefixes = prefixCascades(sections, ports, points);
-  const suffixes = suffixCascades(sections, ports, points);
-  const left = new Float64Array(points * ports * ports * 2);
-  const lossOf = (s: Float64Array): Float64Array =>
-    throughLoss(atReference(chain, s, frequenciesHz, reference).s, ports, points);
-  return {
-    all: lossOf(prefixes.at(-1)!),
-    without: sections.map((_, i) => {
-      leaveOneOutInto(left, prefixes, suffixes, i, ports, points);
-      return lossOf(left);
-    }),
-    tolls: sections.map((section, i) => tollOfSection(chain, i, section, frequenciesHz)),
-  };
-}
-
-/** Insertion loss near to far, of SDD21 = (S31 - S32 - S41 + S42)/2 for four ports. */
-function throughLoss(s: Float64Array, ports: 2 | 4, points: number): Float64Array {
-  const losses = new Float64Array(points);
-  for (let point = 0; point < points; point++) {
-    if (ports === 2) {
-      losses[point] = lossDb(s[point * 8 + 4]!, s[point * 8 + 5]!);
-      continue;
-    }
-    const k = point * 32 + 16;
-    const re = s[k]! - s[k + 2]! - s[k + 8]! + s[k + 10]!;
-    const im = s[k + 1]! - s[k + 3]! - s[k + 9]! + s[k + 11]!;
-    losses[point] = lossDb(re / 2, im / 2);
-  }
-  return losses;
-}
-
-function finiteOrNull(value: number): number | null {
-  return Number.isFinite(value) ? value : null;
 }

@@ -19,6 +19,7 @@ export function toResponse(check: Check, fingerprint: string): ChannelResponse {
     limits: check.limits.map(limitResultOf),
     lines: [...check.lines],
     ledger: [...check.ledger],
+    spoils: [...check.spoils],
   };
 }
 

@@ -39,6 +39,7 @@ export function toView(check: Check, fingerprint: string): CheckView {
     curves: curvesOf(check),
     limits: channel.limits.map((_, i) => limitViewOf(check, i)),
     ledger: [...check.ledger],
+    spoils: [...check.spoils],
     warnings: [...check.warnings],
   };
 }

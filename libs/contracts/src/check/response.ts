@@ -57,6 +57,17 @@ export const ledger = z.object({
 });
 export type Ledger = z.output<typeof ledger>;
 
+/** What each element spoils of a return loss: how much it would rise without the element, in dB. */
+export const spoils = z.object({
+  limitId: z.string(),
+  atHz: z.number(),
+  returnLossDb: decibels,
+  rows: z.array(
+    z.object({ element: z.string(), spoilsDb: decibels, rangeDb: z.tuple([decibels, decibels]) }),
+  ),
+});
+export type Spoils = z.output<typeof spoils>;
+
 const lineMode = z.object({
   z0Ohm: z.number(),
   effectivePermittivity: z.number(),
@@ -83,5 +94,7 @@ export const channelResponse = z.object({
   limits: z.array(limitResult),
   lines: z.array(lineResult),
   ledger: z.array(ledger),
+  /** For limits on return loss. */
+  spoils: z.array(spoils),
 });
 export type ChannelResponse = z.output<typeof channelResponse>;

@@ -1,7 +1,7 @@
 import * as z from 'zod';
 import { limitQuantities, limitStatuses } from '../channel-file/limits';
 import { standings } from '../channel-file/common';
-import { ledger, limitResult } from './response';
+import { ledger, limitResult, spoils } from './response';
 import { channelVerdict } from './verdicts';
 
 const curve = z.array(z.number().nullable());
@@ -57,6 +57,7 @@ export const checkView = z.object({
   curves: z.object({ insertionLossDb: curve, returnLossNearDb: curve, returnLossFarDb: curve }),
   limits: z.array(limitView),
   ledger: z.array(ledger),
+  spoils: z.array(spoils),
   warnings: z.array(warning),
 });
 export type CheckView = z.output<typeof checkView>;
