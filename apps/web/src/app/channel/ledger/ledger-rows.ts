@@ -1,4 +1,4 @@
-import type { CheckView, CompleteChannel, Ledger } from '@tollgate/contracts';
+import type { CheckView, CompleteChannel, Ledger, Spoils } from '@tollgate/contracts';
 import { formatDb } from '@tollgate/quantities';
 import { mainValues, nameOf } from '../elements/element-words';
 
@@ -37,6 +37,30 @@ export function ledgerLines(ledger: Ledger, view: CheckView, document: CompleteC
       allotted: row.allotmentDb === undefined ? '' : formatDb(row.allotmentDb, false),
       balanceDb,
       bar: Math.abs(balanceDb ?? 0) / largest,
+    };
+  });
+}
+
+export interface SpoilsLine {
+  readonly id: string;
+  readonly name: string;
+  readonly standing: string;
+  readonly spoils: string;
+  readonly range: string;
+}
+
+/** What each element spoils of a return loss, in the order of the channel. */
+export function spoilsLines(spoils: Spoils, view: CheckView, document: CompleteChannel): SpoilsLine[] {
+  const elements = new Map(document.elements.map((element) => [element.id, element]));
+  const standings = new Map(view.elementStandings.map((each) => [each.element, each.standing]));
+  return spoils.rows.map(({ element: id, spoilsDb, rangeDb }) => {
+    const element = elements.get(id);
+    return {
+      id,
+      name: element ? nameOf(element) : id,
+      standing: standings.get(id) ?? '',
+      spoils: formatDb(spoilsDb, false),
+      range: savedWords(rangeDb, null),
     };
   });
 }

@@ -2,7 +2,7 @@ import { ChangeDetectionStrategy, Component, computed, inject, signal } from '@a
 import { formatDb, formatQuantity } from '@tollgate/quantities';
 import { ChannelStore } from '../document/channel-store';
 import { CheckRunner } from '../document/check-runner';
-import { ledgerLines } from './ledger-rows';
+import { ledgerLines, spoilsLines } from './ledger-rows';
 
 /** Who takes how much of the budget, at the evaluation frequency or where a limit is nearest. */
 @Component({
@@ -18,7 +18,7 @@ export class LedgerTable {
 
   protected readonly choices = computed(() => {
     const view = this.check.view();
-    return (view?.ledger ?? []).map((ledger, i) => {
+    const tolls = (view?.ledger ?? []).map((ledger, i) => {
       const at = formatQuantity(ledger.atHz, 'frequency', { digits: 5 });
       const limit = view?.limits.find((each) => each.id === ledger.limitId);
       const evaluation = i === 0 && ledger.atHz === view?.evaluationHz;
@@ -27,16 +27,32 @@ export class LedgerTable {
         title: evaluation || !limit ? at : `${at}, worst of ${limit.title}`,
       };
     });
+    const spoiled = (view?.spoils ?? []).map(({ atHz, limitId }, i) => {
+      const at = formatQuantity(atHz, 'frequency', { digits: 5 });
+      const title = view?.limits.find(({ id }) => id === limitId)?.title ?? limitId;
+      return { key: `spoils ${i}`, title: `${at}, spoils ${title}` };
+    });
+    return [...tolls, ...spoiled];
   });
   protected readonly key = computed(() =>
-    this.choices().some(({ key }) => key === this.wanted()) ? this.wanted() : '0',
+    this.choices().some(({ key }) => key === this.wanted()) ? this.wanted() : (this.choices()[0]?.key ?? ''),
   );
   protected readonly ledger = computed(() => this.check.view()?.ledger[Number(this.key())]);
   protected readonly lines = computed(() => {
     const [ledger, view, document] = [this.ledger(), this.check.view(), this.store.document()];
     return ledger && view && document ? ledgerLines(ledger, view, document) : [];
   });
+  protected readonly spoils = computed(() => {
+    const [word, index] = this.key().split(' ');
+    return word === 'spoils' ? this.check.view()?.spoils[Number(index)] : undefined;
+  });
+  protected readonly spoilsLines = computed(() => {
+    const [spoils, view, document] = [this.spoils(), this.check.view(), this.store.document()];
+    return spoils && view && document ? spoilsLines(spoils, view, document) : [];
+  });
   protected readonly head = computed(() => {
+    const spoils = this.spoils();
+    if (spoils) return `return loss ${formatDb(spoils.returnLossDb)}`;
     const ledger = this.ledger();
     if (ledger?.limitDb === undefined) return '';
     return `limit ${formatDb(ledger.limitDb)}`;
