@@ -15,8 +15,9 @@ export function cautionsOf(
 const noticeableError = 1e-6;
 
 function ofParts(facts: Evaluation['facts']): Warning[] {
-  return facts.flatMap(({ warnings, interpolationErrorAbs }, i) => {
+  return facts.flatMap(({ warnings, part }, i) => {
     const messages = [...warnings];
+    const interpolationErrorAbs = part?.interpolationErrorAbs;
     if (interpolationErrorAbs !== undefined && interpolationErrorAbs > noticeableError) {
       const error = Number(interpolationErrorAbs.toPrecision(2));
       messages.push(`Interpolated between the file's points: its S may be off by about ${error}.`);

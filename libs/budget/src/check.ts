@@ -82,6 +82,10 @@ function checked(chain: Chain): Check {
     ledger: ledgersOf(chain, limits, delayS),
     spoils: spoilsOf(chain, limits, delayS),
     lines: linesOf(channel, facts),
+    parts: channel.elements.flatMap(({ id }, i) => {
+      const { part } = facts[i]!;
+      return part ? [{ element: id, ...part }] : [];
+    }),
     standings: channel.elements.map((element) => ({
       element: element.id,
       ...elementStanding(element, channel.stackup),

@@ -3,6 +3,7 @@ import type {
   CompleteChannel,
   FieldProblem,
   Ledger,
+  PartFacts,
   Spoils,
   Standing,
   Warning,
@@ -37,6 +38,7 @@ export interface Check {
   readonly ledger: readonly Ledger[];
   readonly spoils: readonly Spoils[];
   readonly lines: ChannelResponse['lines'];
+  readonly parts: readonly PartFacts[];
   readonly standings: readonly ElementStanding[];
   readonly warnings: readonly Warning[];
   /** One-way delay by length and permittivity, over all elements. */

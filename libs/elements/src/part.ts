@@ -1,6 +1,5 @@
 import type { ElementOf, PortPicks } from '@tollgate/contracts';
 import {
-  assessQuality,
   interpolate,
   NetworkError,
   pickPorts,
@@ -13,6 +12,7 @@ import {
 } from '@tollgate/network';
 import { networkOfFile, TouchstoneError } from '@tollgate/touchstone';
 import { pairOfLegs } from './legs';
+import { factsOfFile, partWarnings, samplingOf } from './part-facts';
 import {
   ElementError,
   type BuildContext,
@@ -137,12 +137,26 @@ export function buildPart(
   const result = interpolated(element, own, frequenciesHz);
   const { s } = renormalize(result.network, context.jointOhm);
   const legs = context.signaling === 'differential' && own.ports === 2;
+  const facts = {
+    ...factsOfFile(part),
+    ...samplingOf(own),
+    portOrder: orderWords(element),
+    reversed: element.reversed ?? false,
+    interpolationErrorAbs: result.error.maxAbs,
+    ...(result.extendedHz ? { extendedHz: [...result.extendedHz] as [number, number] } : {}),
+  };
   return {
     s: legs ? pairOfLegs(s, s, frequenciesHz.length) : s,
-    warnings: [...result.warnings, ...partWarnings(part)],
-    interpolationErrorAbs: result.error.maxAbs,
-    ...(result.extendedHz ? { extendedHz: result.extendedHz } : {}),
+    warnings: [...result.warnings, ...partWarnings(facts)],
+    part: facts,
   };
+}
+
+function orderWords({ portOrder, ports }: PartElement): string {
+  if (!ports) return portOrder ?? '1-2';
+  return 'nearP' in ports
+    ? `near ${ports.nearP}, ${ports.nearN}; far ${ports.farP}, ${ports.farN}`
+    : `near ${ports.near}, far ${ports.far}`;
 }
 
 function interpolated(element: PartElement, network: Network, frequenciesHz: Float64Array) {
@@ -169,23 +183,4 @@ function clipped(wanted: Float64Array, data: Float64Array): Float64Array {
   const near = (f: number, end: number) => f !== end && Math.abs(f - end) <= end * endTolerance;
   if (wanted.every((f) => !near(f, first) && !near(f, last))) return wanted;
   return wanted.map((f) => (near(f, first) ? first : near(f, last) ? last : f));
-}
-
-const graded = new WeakMap<Network, readonly string[]>();
-
-/** What a person should know of the file; worked out once a file. */
-function partWarnings({ file }: ElementPart): readonly string[] {
-  const known = graded.get(file.network);
-  if (known) return known;
-  const words: string[] = [];
-  if (file.network.ports <= 8) {
-    const { passivity } = assessQuality(file.network);
-    if (passivity.failingPoints > 0) {
-      words.push(
-        `${file.fileName} is not passive at ${passivity.failingPoints} ${passivity.failingPoints === 1 ? 'point' : 'points'} (worst singular value ${passivity.worst.singularValue.toFixed(4)} at ${(passivity.worst.frequencyHz / 1e9).toPrecision(4)} GHz, graded ${passivity.grade}).`,
-      );
-    }
-  }
-  graded.set(file.network, words);
-  return words;
 }

@@ -1,4 +1,4 @@
-import type { ChannelResponse, Signaling, Stackup } from '@tollgate/contracts';
+import type { ChannelResponse, PartFacts, Signaling, Stackup } from '@tollgate/contracts';
 import type { TouchstoneFile } from '@tollgate/touchstone';
 
 /** A measured or supplied part with the hash of its bytes; found by the element's `file` or `fileId`. */
@@ -44,10 +44,8 @@ export interface BuiltElement {
   /** Point-major scattering parameters at `jointOhm`. */
   readonly s: Float64Array;
   readonly warnings: readonly string[];
-  /** Touchstone parts: the largest estimate of what interpolation added, on these frequencies. */
-  readonly interpolationErrorAbs?: number;
+  /** Touchstone parts only. */
+  readonly part?: Omit<PartFacts, 'element'>;
   /** Traces only. */
   readonly line?: LineFacts;
-  /** The range that was carried on below the part's band. */
-  readonly extendedHz?: readonly [number, number];
 }

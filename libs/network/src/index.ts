@@ -19,4 +19,5 @@ export * from './network';
 export * from './ports';
 export * from './quality';
 export * from './renormalize';
+export * from './sampling';
 export * from './singular';

@@ -1,4 +1,5 @@
 import * as z from 'zod';
+import { partFacts } from './part-facts';
 import { limitVerdicts } from './verdicts';
 
 export const responseFormat = 'tollgate.response/1';
@@ -93,6 +94,8 @@ export const channelResponse = z.object({
   mixedModeReferenceOhm: z.array(complexNumber),
   limits: z.array(limitResult),
   lines: z.array(lineResult),
+  /** An entry for each element that is a file. */
+  parts: z.array(partFacts),
   ledger: z.array(ledger),
   /** For limits on return loss. */
   spoils: z.array(spoils),

@@ -1,6 +1,7 @@
 import * as z from 'zod';
 import { limitQuantities, limitStatuses } from '../channel-file/limits';
 import { standings } from '../channel-file/common';
+import { partFacts } from './part-facts';
 import { ledger, limitResult, spoils } from './response';
 import { channelVerdict } from './verdicts';
 
@@ -58,6 +59,7 @@ export const checkView = z.object({
   limits: z.array(limitView),
   ledger: z.array(ledger),
   spoils: z.array(spoils),
+  parts: z.array(partFacts),
   warnings: z.array(warning),
 });
 export type CheckView = z.output<typeof checkView>;

@@ -1,4 +1,4 @@
-import type { LimitView } from '@tollgate/contracts';
+import type { LimitView, PartFacts } from '@tollgate/contracts';
 import { formatDb, formatQuantity } from '@tollgate/quantities';
 
 const quantityWords: Readonly<Record<LimitView['quantity'], string>> = {
@@ -67,6 +67,26 @@ const hz = (value: number) => formatQuantity(value, 'frequency', { digits: 4 });
 export function rangesWords(ranges: readonly (readonly [number, number])[]): string {
   return ranges
     .map(([from, to]) => (from === to ? `at ${hz(from)}` : `from ${hz(from)} to ${hz(to)}`))
+    .join(', ');
+}
+
+/** A file behind an element in one line: band, sampling, grades, and what reading between its points may cost. */
+export function partWords(part: PartFacts): string {
+  const [from, to] = part.bandHz;
+  const grades = (['passivity', 'reciprocity', 'causality'] as const).flatMap((metric) => {
+    const grade = part.quality?.[metric];
+    return grade ? [`${metric} ${grade.grade} (${grade.percent.toFixed(1)} %)`] : [];
+  });
+  return [
+    `${part.fileName}: ${part.ports} ports, ${part.points} points from ${hz(from)} to ${hz(to)}`,
+    part.reachesDc ? '' : 'no point at 0 Hz',
+    ...grades,
+    part.gapsHz.length ? `no points ${rangesWords(part.gapsHz)}` : '',
+    `turns by up to ${part.phaseStepDeg.toFixed(0)}° between points`,
+    part.interpolationErrorAbs > 0 ? `read to about ${part.interpolationErrorAbs.toPrecision(1)} of S` : '',
+    part.extendedHz ? `carried on ${rangesWords([part.extendedHz])}` : '',
+  ]
+    .filter(Boolean)
     .join(', ');
 }
 

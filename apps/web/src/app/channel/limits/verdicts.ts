@@ -1,7 +1,7 @@
 import { ChangeDetectionStrategy, Component, computed, inject } from '@angular/core';
 import { Verdict } from '../../marks/verdict';
 import { CheckRunner } from '../document/check-runner';
-import { cornerWords, limitFacts, marginWords, rangesWords, sourceWords } from './verdict-lines';
+import { cornerWords, limitFacts, marginWords, partWords, rangesWords, sourceWords } from './verdict-lines';
 
 /** What each limit came to, what was not judged, and what to be careful about. */
 @Component({
@@ -28,6 +28,9 @@ export class Verdicts {
   protected readonly beyond = computed(() => [
     ...new Set((this.check.view()?.limits ?? []).flatMap((limit) => limit.beyond)),
   ]);
+  protected readonly parts = computed(() =>
+    (this.check.view()?.parts ?? []).map((part) => ({ element: part.element, words: partWords(part) })),
+  );
   protected readonly warnings = computed(() => [
     ...new Set((this.check.view()?.warnings ?? []).map((warning) => warning.message)),
   ]);
