@@ -6,6 +6,7 @@ import { buildPart, partCoverage, partKey } from './part';
 import { buildTrace } from './trace';
 import { isTwoPort, twoPort } from './two-port';
 import { ElementError, type BuildContext, type BuiltElement, type ElementCoverage } from './types';
+import { buildVia } from './via';
 
 /** Files an element needs, each with the path inside the element that names it. */
 export function elementFiles(element: ChannelElement): { key: string; path: string }[] {
@@ -43,6 +44,7 @@ export function buildElement(
       : buildPart(element, frequenciesHz, context);
   }
   if (element.kind === 'trace') return buildTrace(element, frequenciesHz, context);
+  if (element.kind === 'via') return buildVia(element, frequenciesHz, context);
   return { s: circuitKind(element, frequenciesHz, context), warnings: [] };
 }
 

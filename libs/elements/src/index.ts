@@ -2,6 +2,7 @@ export { buildElement, elementCoverage, elementFiles } from './element';
 export { elementDelayS, elementTollDb } from './loss';
 export { elementProblems } from './problems';
 export { elementStanding } from './standing';
+export { viaFacts, viaNotchHz, type ViaFacts, type ViaSection } from './via';
 export {
   ElementError,
   type BuildContext,

@@ -6,6 +6,7 @@ import { lineLossDb } from './line';
 import { modesOfCoupledLine } from './pair';
 import { traceDelayS, traceTollDb } from './trace';
 import type { BuildContext } from './types';
+import { viaDelayS } from './via';
 
 /**
  * The exact toll of a kind that is a line: attenuation x length, of the odd mode for a pair (SDD).
@@ -47,6 +48,8 @@ export function elementDelayS(element: ChannelElement, context: BuildContext): n
       return element.lengthM * Math.sqrt(element.inductanceHPerM * element.capacitanceFPerM);
     case 'trace':
       return traceDelayS(element, context);
+    case 'via':
+      return viaDelayS(element, context);
     case 'budget-loss':
       return element.delayS ?? 0;
     case 'touchstone':

@@ -2,6 +2,7 @@ import { kindDescription, type ChannelElement, type Signaling, type Stackup } fr
 import type { PartElement } from './part';
 import { traceProblems } from './trace';
 import type { ElementProblem } from './types';
+import { viaProblems } from './via';
 
 /** What can be said of an element before its parts are at hand. */
 export function elementProblems(
@@ -23,13 +24,7 @@ export function elementProblems(
     case 'trace':
       return traceProblems(element, signaling, stackup);
     case 'via':
-      return [
-        {
-          path: 'kind',
-          message: `${title} is read and kept, but not computed by this engine yet.`,
-          mend: 'Describe it by a line, coupled-line or circuit kind until the field solution comes.',
-        },
-      ];
+      return viaProblems(element, signaling, stackup);
     case 'touchstone':
       return fileProblems(element);
     case 'connector':

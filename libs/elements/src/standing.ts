@@ -6,6 +6,7 @@ import {
   type Stackup,
 } from '@tollgate/contracts';
 import { traceStanding } from './trace';
+import { viaStanding } from './via';
 
 /** The standing the kind allows, lowered (never raised) by what the element states; and why. */
 export function elementStanding(
@@ -23,7 +24,7 @@ function allowedStanding(element: ChannelElement, stackup?: Stackup): { standing
     case 'trace':
       return traceStanding(element, stackup);
     case 'via':
-      return { standing: 'estimated', reason: 'closed form' };
+      return viaStanding(element, element.pitchM === undefined ? 'single-ended' : 'differential', stackup);
     case 'budget-loss':
       return { standing: 'assumed', reason: 'a placeholder for a part that is not known' };
     case 'touchstone':
