@@ -2,7 +2,8 @@ import { vacuumImpedance } from './constants';
 import type { Rectangle } from './cross-section';
 import { checkPositive } from './line-error';
 import type { Roughness } from './roughness';
-import { roughnessFactor, skinDepth, surfaceResistance } from './roughness';
+import { skinDepth, surfaceResistance } from './roughness';
+import { roughnessExcess } from './rough-impedance';
 
 /** Metal of a trace and of the planes it returns on. */
 export interface Conductor {
@@ -50,8 +51,8 @@ const smooth: Roughness = { model: 'none' };
 /**
  * Internal impedance a metre at each frequency, pairs (R, X) in ohm/m. The skin-effect resistance of the walls is joined to the resistance
  * at 0 Hz by the impedance of a slab, Rdc x coth x with x = (1 + j) Rskin/Rdc (formula B8): it tends to both, and is causal.
- * Roughness multiplies the skin part wall by wall; the etched sides count as the mean of foot and top. The multiplier acts on
- * resistance and reactance alike, which is causal only approximately.
+ * Roughness adds to the skin part wall by wall, resistance and reactance together (roughnessExcess); the etched sides count as
+ * the mean of foot and top.
  */
 export function internalImpedance(
   conductor: Conductor,
@@ -67,24 +68,27 @@ export function internalImpedance(
   const faceTop = roughness?.top ?? smooth;
   const lower = foot === 'down' ? faceFoot : faceTop;
   const upper = foot === 'down' ? faceTop : faceFoot;
-  const planeBelow = roughness?.planeBelow ?? lower;
-  const planeAbove = roughness?.planeAbove ?? upper;
+  const faces = (
+    [
+      [shares.lower + shares.sides / 2, lower],
+      [shares.upper + shares.sides / 2, upper],
+      [shares.planeBelow, roughness?.planeBelow ?? lower],
+      [shares.planeAbove, roughness?.planeAbove ?? upper],
+    ] as const
+  ).filter(([share, face]) => share > 0 && face.model !== 'none');
   const smoothSum = shares.lower + shares.upper + shares.sides + shares.planeBelow + shares.planeAbove;
   const out = new Float64Array(frequenciesHz.length * 2);
   frequenciesHz.forEach((f, k) => {
     const depth = skinDepth(f, conductivitySPerM);
-    const [kLower, kUpper] = [roughnessFactor(lower, depth), roughnessFactor(upper, depth)];
-    const roughSum =
-      shares.lower * kLower +
-      shares.upper * kUpper +
-      (shares.sides * (kLower + kUpper)) / 2 +
-      shares.planeBelow * roughnessFactor(planeBelow, depth) +
-      shares.planeAbove * roughnessFactor(planeAbove, depth);
     const sheet = surfaceResistance(f, conductivitySPerM) / vacuumImpedance;
     const [re, im] = slab((sheet * smoothSum) / directOhmPerM);
-    const extra = sheet * (roughSum - smoothSum);
-    out[k * 2] = directOhmPerM * re + extra;
-    out[k * 2 + 1] = directOhmPerM * im + extra;
+    out[k * 2] = directOhmPerM * re;
+    out[k * 2 + 1] = directOhmPerM * im;
+    for (const [share, face] of faces) {
+      const [resistance, reactance] = roughnessExcess(face, depth);
+      out[k * 2]! += sheet * share * resistance;
+      out[k * 2 + 1]! += sheet * share * reactance;
+    }
   });
   return out;
 }

@@ -1,10 +1,11 @@
 import type { Conductor, WallShares } from './conductor';
 import { internalImpedance, wallShares } from './conductor';
-import { decibelsPerNeper, speedOfLight } from './constants';
+import { speedOfLight } from './constants';
 import type { CrossSection, Rectangle, SectionKind } from './cross-section';
 import { rectangleOf, sectionKind } from './cross-section';
 import type { Dielectric } from './dielectric';
 import { permittivity } from './dielectric';
+import { lineModeOf, type LineMode, type Propagation } from './line-constants';
 import { disperseMicrostrip } from './microstrip';
 import type { LineModel, ModeName } from './models';
 import { modelOf } from './models';
@@ -17,19 +18,6 @@ export interface TraceLine {
   readonly below: Dielectric;
   /** Between the trace and the plane above; the same as below where absent. Not used for a microstrip. */
   readonly above?: Dielectric;
-}
-
-/** One mode of propagation. Pairs are (real, imaginary). */
-export interface LineMode {
-  /** Lossless, quasi-static, permittivities as given. */
-  readonly z0Ohm: number;
-  readonly effectivePermittivity: number;
-  /** Series impedance and shunt admittance a metre: what a chain of lines needs, finite at 0 Hz too. */
-  readonly seriesOhmPerM: Float64Array;
-  readonly shuntSPerM: Float64Array;
-  /** R/(2 Z0) and G Z0/2 in dB/m, roughness as given. */
-  readonly conductorLossDbPerM: Float64Array;
-  readonly dielectricLossDbPerM: Float64Array;
 }
 
 export interface SolvedLine {
@@ -101,44 +89,25 @@ function solveMode(job: Job, frequenciesHz: Float64Array): LineMode {
     frequenciesHz,
   );
   const filling = fillingOf(job, frequenciesHz);
-  const count = frequenciesHz.length;
-  const seriesOhmPerM = new Float64Array(count * 2);
-  const shuntSPerM = new Float64Array(count * 2);
-  const conductorLossDbPerM = new Float64Array(count);
-  const dielectricLossDbPerM = new Float64Array(count);
-  for (let k = 0; k < count; k++) {
-    const f = frequenciesHz[k]!;
-    const omega = 2 * Math.PI * f;
-    let ee = filling.ee[k * 2]!;
-    let z0 = airOhm / Math.sqrt(ee);
-    const tangent = filling.ee[k * 2 + 1]! / ee;
-    if (kind === 'microstrip' && f > 0) {
-      const fn = (f / 1e9) * (rectangle.belowM * 1e3);
-      const er = filling.below[k * 2]!;
-      ({ effectivePermittivity: ee, z0Ohm: z0 } = disperseMicrostrip(
-        rectangle.widthM / rectangle.belowM,
-        er,
-        fn,
-        ee,
-        z0,
-      ));
-    }
-    const slowness = Math.sqrt(ee) / speedOfLight;
-    seriesOhmPerM[k * 2] = inner[k * 2]!;
-    seriesOhmPerM[k * 2 + 1] = inner[k * 2 + 1]! + omega * z0 * slowness;
-    shuntSPerM[k * 2] = (omega * slowness * tangent) / z0;
-    shuntSPerM[k * 2 + 1] = (omega * slowness) / z0;
-    conductorLossDbPerM[k] = (decibelsPerNeper * inner[k * 2]!) / (2 * z0);
-    dielectricLossDbPerM[k] = (decibelsPerNeper * omega * slowness * tangent) / 2;
-  }
-  return {
-    z0Ohm: airOhm / Math.sqrt(given),
-    effectivePermittivity: given,
-    seriesOhmPerM,
-    shuntSPerM,
-    conductorLossDbPerM,
-    dielectricLossDbPerM,
-  };
+  const heightMm = rectangle.belowM * 1e3;
+  const disperse = (k: number, { effectivePermittivity, z0Ohm }: Propagation): Propagation =>
+    disperseMicrostrip(
+      rectangle.widthM / rectangle.belowM,
+      filling.below[k * 2]!,
+      (frequenciesHz[k]! / 1e9) * heightMm,
+      effectivePermittivity,
+      z0Ohm,
+    );
+  return lineModeOf(
+    {
+      airOhm,
+      givenPermittivity: given,
+      permittivity: filling.ee,
+      internal: inner,
+      ...(kind === 'microstrip' ? { disperse } : {}),
+    },
+    frequenciesHz,
+  );
 }
 
 /**

@@ -1,0 +1,125 @@
+import { internalImpedance, type Conductor } from '../conductor';
+import { speedOfLight } from '../constants';
+import { permittivity, type Dielectric } from '../dielectric';
+import { lineModeOf, type LineMode, type Propagation } from '../line-constants';
+import { disperseMicrostrip, microstripPermittivity } from '../microstrip';
+import type { ModeName } from '../models';
+import { sameHeightM, shapeOf, type FieldSection } from './section';
+import type { FieldMode, FieldSolution } from './solve';
+
+/** What a section is made of, sheet by sheet. */
+export interface SectionMaterials {
+  readonly sheets: readonly Dielectric[];
+  readonly mask?: Dielectric;
+  readonly conductor: Conductor;
+}
+
+export interface FieldLine {
+  readonly modes: Partial<Record<ModeName, LineMode>>;
+  readonly cautions: readonly string[];
+}
+
+/** Frequency times height, over c0, up to which the dispersion of a microstrip is published. */
+const dispersionLimit = 0.13;
+
+/**
+ * Line constants over frequency from a solved section, without solving again: the effective permittivity follows the dielectrics by their
+ * filling (first order in their change and in the loss), copper by its walls, and a microstrip disperses by the ratios of formula B2
+ * at its height, the single line's on both modes of a pair. Strip line has no dispersion but the dielectrics' own.
+ */
+export function lineOfField(
+  solution: FieldSolution,
+  section: FieldSection,
+  materials: SectionMaterials,
+  frequenciesHz: Float64Array,
+): FieldLine {
+  const { lowerWidthM, upperWidthM } = shapeOf(section);
+  const rectangle = {
+    widthM: (lowerWidthM + upperWidthM) / 2,
+    thicknessM: section.trace.thicknessM,
+    belowM: section.traceAtM,
+    aboveM: Infinity,
+    gapM: section.gapM ?? Infinity,
+  };
+  const dielectrics = [...materials.sheets, ...(materials.mask ? [materials.mask] : [])];
+  const curves = dielectrics.map((material) => permittivity(material, frequenciesHz));
+  const dispersion = dispersionOf(section, rectangle.widthM, materials.sheets, frequenciesHz);
+  const modes: Partial<Record<ModeName, LineMode>> = {};
+  for (const [name, mode] of Object.entries(solution.modes) as [ModeName, FieldMode][]) {
+    const { foot = 'down' } = section.trace;
+    const internal = internalImpedance(materials.conductor, rectangle, foot, mode.shares, frequenciesHz);
+    modes[name] = lineModeOf(
+      {
+        airOhm: mode.airOhm,
+        givenPermittivity: mode.effectivePermittivity,
+        permittivity: filled(mode, dielectrics, curves, frequenciesHz.length),
+        internal,
+        ...(dispersion.disperse ? { disperse: dispersion.disperse } : {}),
+      },
+      frequenciesHz,
+    );
+  }
+  const constant = dielectrics.some(({ dispersion: kind, df }) => kind === 'constant' && df > 0);
+  const cautions = constant ? ['A constant permittivity with losses is not causal.'] : [];
+  return { modes, cautions: [...cautions, ...dispersion.cautions] };
+}
+
+/** Complex effective permittivity at each frequency, pairs (ee', ee''). */
+function filled(
+  { effectivePermittivity, filling }: FieldMode,
+  dielectrics: readonly Dielectric[],
+  curves: readonly Float64Array[],
+  count: number,
+): Float64Array {
+  const out = new Float64Array(count * 2);
+  for (let k = 0; k < count; k++) {
+    let re = effectivePermittivity;
+    let im = 0;
+    for (let i = 0; i < curves.length; i++) {
+      re += filling[i]! * (curves[i]![k * 2]! - dielectrics[i]!.dk);
+      im += filling[i]! * curves[i]![k * 2 + 1]!;
+    }
+    out[k * 2] = re;
+    out[k * 2 + 1] = im;
+  }
+  return out;
+}
+
+interface Dispersion {
+  readonly disperse?: (k: number, quasiStatic: Propagation) => Propagation;
+  readonly cautions: readonly string[];
+}
+
+/** Below this permittivity the formulas have no meaning, and nothing disperses. */
+const leastPermittivity = 1.1;
+
+function dispersionOf(
+  section: FieldSection,
+  widthM: number,
+  sheets: readonly Dielectric[],
+  frequenciesHz: Float64Array,
+): Dispersion {
+  const heightM = section.traceAtM;
+  const { heightM: topM } = shapeOf(section);
+  const outer = !section.planeAbove && Math.abs(heightM - topM) < sameHeightM;
+  // Sheets under the trace are capacitances in series.
+  const er = heightM / section.sheets.reduce((sum, { thicknessM, dk }) => sum + thicknessM / dk, 0);
+  if (!outer || er < leastPermittivity || sheets.length === 0) return { cautions: [] };
+  const u = widthM / heightM;
+  const closed = microstripPermittivity(u, er);
+  const disperse = (k: number, { effectivePermittivity, z0Ohm }: Propagation): Propagation => {
+    const fn = (frequenciesHz[k]! / 1e9) * (heightM * 1e3);
+    const dispersed = disperseMicrostrip(u, er, fn, closed, 1);
+    return {
+      effectivePermittivity: (effectivePermittivity * dispersed.effectivePermittivity) / closed,
+      z0Ohm: z0Ohm * dispersed.z0Ohm,
+    };
+  };
+  const topHz = frequenciesHz[frequenciesHz.length - 1] ?? 0;
+  const limitHz = (dispersionLimit * speedOfLight) / heightM;
+  const cautions =
+    topHz > limitHz
+      ? [`Above ${limitHz.toPrecision(3)} Hz the dispersion formula leaves its published range.`]
+      : [];
+  return { disperse, cautions };
+}

@@ -1,0 +1,190 @@
+import { sameHeightM, type Shape } from './section';
+
+/** What a piece of the outline is. */
+export const surface = { lower: 0, upper: 1, side: 2, planeAbove: 3, between: 4 } as const;
+export type Surface = (typeof surface)[keyof typeof surface];
+
+/** How segments crowd: at its start, at both ends, or at neither. */
+export type Crowding = 'start' | 'end' | 'both' | 'none' | 'outward';
+
+/**
+ * A straight piece of the right half of a section. Copper knows the material outside it; a piece between two dielectrics the
+ * one on the left of its direction and the one on the right. Materials count sheets, then the mask, then air.
+ */
+export interface Piece {
+  readonly surface: Surface;
+  readonly from: readonly [number, number];
+  readonly to: readonly [number, number];
+  readonly crowding: Crowding;
+  /** Copper: outside. Between: on the left. */
+  readonly left: number;
+  readonly right: number;
+  /** Outer angle over pi at each end where the copper has a corner; 0 where it has none. */
+  readonly corners: readonly [number, number];
+}
+
+/** Half width reached by open interfaces, in heights of what they belong to: beyond, what is left weighs under 1e-5. */
+const openReach = 40;
+/** The same under a plane, where fields die out by exp(-pi x/height). */
+const coveredReach = 5;
+
+export function airOf({ section }: Shape): number {
+  return section.sheets.length + (section.mask ? 1 : 0);
+}
+
+/** All pieces of the right half: copper, the plane above, and the faces between dielectrics. */
+export function outlineOf(shape: Shape): Piece[] {
+  const { section, heightM } = shape;
+  const pieces = copperOf(shape);
+  const edgeM = shape.centreM + Math.max(shape.lowerWidthM, shape.upperWidthM) / 2;
+  const scaleM = Math.max(
+    heightM,
+    section.traceAtM + section.trace.thicknessM + (section.mask?.thicknessM ?? 0),
+  );
+  const endM = edgeM + (section.planeAbove ? coveredReach : openReach) * scaleM;
+  for (let i = 0; i + 1 < section.sheets.length; i++)
+    pieces.push(...faceAt(shape, shape.topsM[i]!, i, i + 1, endM));
+  if (section.planeAbove) {
+    pieces.push(...planeAbove(shape, endM));
+  } else if (section.mask) {
+    const mask = section.sheets.length;
+    pieces.push(...faceAt(shape, heightM, mask - 1, mask, endM), ...maskSurface(shape, endM));
+  } else {
+    pieces.push(...faceAt(shape, heightM, section.sheets.length - 1, airOf(shape), endM));
+  }
+  return pieces;
+}
+
+function sheetAt({ section, topsM }: Shape, yM: number): number {
+  const index = topsM.findIndex((top) => yM < top - sameHeightM);
+  return index >= 0 ? index : section.sheets.length;
+}
+
+/** Lower face, upper face and side walls of the right-hand trace; only its right half where it is alone. */
+function copperOf(shape: Shape): Piece[] {
+  const { section, centreM, lowerWidthM, upperWidthM } = shape;
+  const { traceAtM: lowM } = section;
+  const highM = lowM + section.trace.thicknessM;
+  const pair = section.gapM !== undefined;
+  const slope = (lowerWidthM - upperWidthM) / 2 / section.trace.thicknessM;
+  // Angle of the space outside over pi at the lower and the upper corner.
+  const inside = Math.atan2(1, slope) / Math.PI;
+  const [lowerCorner, upperCorner] = [2 - inside, 1 + inside];
+  const face = (on: Surface, yM: number, widthM: number, corner: number, material: number): Piece => ({
+    surface: on,
+    from: [pair ? centreM - widthM / 2 : 0, yM],
+    to: [centreM + widthM / 2, yM],
+    crowding: pair ? 'both' : 'end',
+    left: material,
+    right: material,
+    corners: [pair ? corner : 0, corner],
+  });
+  const under = sheetAt(shape, lowM - 2 * sameHeightM);
+  const over = section.mask ? section.sheets.length : sheetAt(shape, highM);
+  const pieces = [
+    face(surface.lower, lowM, lowerWidthM, lowerCorner, under),
+    face(surface.upper, highM, upperWidthM, upperCorner, over),
+    ...wall(shape, 1, [lowerCorner, upperCorner]),
+  ];
+  return pair ? [...pieces, ...wall(shape, -1, [lowerCorner, upperCorner])] : pieces;
+}
+
+/** A side wall from foot to top, cut where it passes from sheet to sheet. */
+function wall(shape: Shape, side: 1 | -1, corners: readonly [number, number]): Piece[] {
+  const { section, topsM, centreM } = shape;
+  const lowM = section.traceAtM;
+  const highM = lowM + section.trace.thicknessM;
+  const cuts = topsM.filter((top) => top > lowM + sameHeightM && top < highM - sameHeightM);
+  const heights = [lowM, ...cuts, highM];
+  return heights.slice(1).map((toM, k): Piece => {
+    const fromM = heights[k]!;
+    const material = section.mask ? section.sheets.length : sheetAt(shape, (fromM + toM) / 2);
+    const [first, last] = [k === 0, k === heights.length - 2];
+    return {
+      surface: surface.side,
+      from: [centreM + side * halfWidthAt(shape, fromM), fromM],
+      to: [centreM + side * halfWidthAt(shape, toM), toM],
+      crowding: 'both',
+      left: material,
+      right: material,
+      corners: [first ? corners[0] : 0, last ? corners[1] : 0],
+    };
+  });
+}
+
+function halfWidthAt({ section, lowerWidthM, upperWidthM }: Shape, yM: number): number {
+  const share = (yM - section.traceAtM) / section.trace.thicknessM;
+  return (lowerWidthM + share * (upperWidthM - lowerWidthM)) / 2;
+}
+
+/** A level face between the material below and the one above, left out where copper lies. Its left looks up. */
+function faceAt(shape: Shape, yM: number, below: number, above: number, endM: number): Piece[] {
+  const { section, centreM } = shape;
+  const lowM = section.traceAtM;
+  const highM = lowM + section.trace.thicknessM;
+  const common = { surface: surface.between, left: above, right: below, corners: [0, 0] as const };
+  const through = yM > lowM - sameHeightM && yM < highM + sameHeightM;
+  if (!through) {
+    const kneeM = centreM + Math.max(shape.lowerWidthM, shape.upperWidthM) / 2;
+    return [
+      { ...common, from: [0, yM], to: [kneeM, yM], crowding: 'none' },
+      { ...common, from: [kneeM, yM], to: [endM, yM], crowding: 'outward' },
+    ];
+  }
+  const halfM = halfWidthAt(shape, Math.min(Math.max(yM, lowM), highM));
+  const outer: Piece = { ...common, from: [centreM + halfM, yM], to: [endM, yM], crowding: 'outward' };
+  return section.gapM === undefined
+    ? [outer]
+    : [{ ...common, from: [0, yM], to: [centreM - halfM, yM], crowding: 'end' }, outer];
+}
+
+function planeAbove(shape: Shape, endM: number): Piece[] {
+  const yM = shape.heightM;
+  const material = shape.section.sheets.length - 1;
+  const kneeM = shape.centreM + Math.max(shape.lowerWidthM, shape.upperWidthM) / 2;
+  const common = { surface: surface.planeAbove, left: material, right: material, corners: [0, 0] as const };
+  return [
+    { ...common, from: [0, yM], to: [kneeM, yM], crowding: 'end' },
+    { ...common, from: [kneeM, yM], to: [endM, yM], crowding: 'outward' },
+  ];
+}
+
+/** The mask's outer face: along the laminate, up the walls parallel to them, over the top. Its left looks out. */
+function maskSurface(shape: Shape, endM: number): Piece[] {
+  const { section, centreM, heightM, lowerWidthM, upperWidthM } = shape;
+  const tM = section.mask!.thicknessM;
+  const thickM = section.trace.thicknessM;
+  const angle = Math.atan2(thickM, (lowerWidthM - upperWidthM) / 2);
+  const [sin, cos] = [Math.sin(angle), Math.cos(angle)];
+  // The wall moved out by the mask's thickness, where it meets the mask on the laminate and on the top.
+  const bottomM = lowerWidthM / 2 + tM * sin - (cos * tM * (1 - cos)) / sin;
+  const topM = lowerWidthM / 2 + tM * sin - (cos * (thickM + tM * (1 - cos))) / sin;
+  const [lowM, highM] = [heightM + tM, heightM + thickM + tM];
+  const outer: [number, number][] = [
+    [centreM + topM, highM],
+    [centreM + bottomM, lowM],
+    [endM, lowM],
+  ];
+  const points: [number, number][] =
+    section.gapM === undefined
+      ? [[0, highM], ...outer]
+      : [...innerMask([centreM - bottomM, lowM], [centreM - topM, highM]), ...outer];
+  const [mask, air] = [section.sheets.length, section.sheets.length + 1];
+  return points.slice(1).map((to, k): Piece => ({
+    surface: surface.between,
+    from: points[k]!,
+    to,
+    crowding: k === points.length - 2 ? 'outward' : k === 0 ? 'end' : 'both',
+    left: air,
+    right: mask,
+    corners: [0, 0],
+  }));
+}
+
+/** The inner half of a pair's mask, from the middle to the top: where the two coats meet, they fill the gap. */
+function innerMask(bottom: [number, number], top: [number, number]): [number, number][] {
+  if (bottom[0] > 0) return [[0, bottom[1]], bottom, top];
+  if (top[0] <= 0) return [[0, top[1]]];
+  const share = -bottom[0] / (top[0] - bottom[0]);
+  return [[0, bottom[1] + share * (top[1] - bottom[1])], top];
+}

@@ -1,0 +1,96 @@
+import { vacuumImpedance } from '../constants';
+import type { WallShares } from '../conductor';
+import type { ModeName } from '../models';
+import { kernelOf, type Kernel } from './kernel';
+import { meshOf, type Fineness, type Mesh } from './mesh';
+import { airCharges, chargeOf, freeCharge, sharesOf, type Symmetry } from './moments';
+import { outlineOf } from './outline';
+import { shapeOf, type FieldSection, type Shape } from './section';
+
+export interface FieldMode {
+  /** Lossless, quasi-static, of one conductor. */
+  readonly z0Ohm: number;
+  readonly effectivePermittivity: number;
+  readonly airOhm: number;
+  /**
+   * How the effective permittivity grows with that of each sheet, and of the mask last; with what air adds it is homogeneous of
+   * degree one: ee = sum of filling x er + the filling of air.
+   */
+  readonly filling: readonly number[];
+  readonly shares: WallShares;
+}
+
+export interface FieldSolution {
+  readonly modes: Partial<Record<ModeName, FieldMode>>;
+  /** Relative, from two meshes. */
+  readonly error: { readonly z0: number; readonly permittivity: number };
+  /** Segments of the finer mesh. */
+  readonly unknowns: number;
+}
+
+const coarse: Fineness = { copper: 8, between: 6, open: 14 };
+const fine: Fineness = { copper: 12, between: 9, open: 21 };
+/** Halving the segments takes the error down by about this power of two. */
+const order = 2;
+
+/**
+ * Impedance, effective permittivity, fillings and wall shares of a cross-section by the method of moments: charges on copper and
+ * bound charges on the faces between dielectrics, constant on each segment, in the space over a plane; quasi-static, no dispersion.
+ * Two meshes give the value (extrapolated) and its error.
+ * @throws LineError for a section that is none
+ */
+export function solveSection(section: FieldSection): FieldSolution {
+  const shape = shapeOf(section);
+  const names: readonly ModeName[] = section.gapM === undefined ? ['single'] : ['even', 'odd'];
+  const [rough, good] = [coarse, fine].map((fineness) => solveOn(shape, names, fineness));
+  const modes: Partial<Record<ModeName, FieldMode>> = {};
+  let [z0, permittivity] = [0, 0];
+  const ratio = fine.copper / coarse.copper;
+  const reach = 1 / (ratio ** order - 1);
+  names.forEach((name, i) => {
+    const [a, b] = [rough!.modes[i]!, good!.modes[i]!];
+    const extrapolated = (pick: (mode: FieldMode) => number) => pick(b) + reach * (pick(b) - pick(a));
+    modes[name] = {
+      z0Ohm: extrapolated((mode) => mode.z0Ohm),
+      effectivePermittivity: extrapolated((mode) => mode.effectivePermittivity),
+      airOhm: extrapolated((mode) => mode.airOhm),
+      filling: b.filling.map((_, k) => extrapolated((mode) => mode.filling[k]!)),
+      shares: b.shares,
+    };
+    z0 = Math.max(z0, Math.abs(a.z0Ohm / b.z0Ohm - 1));
+    permittivity = Math.max(permittivity, Math.abs(a.effectivePermittivity / b.effectivePermittivity - 1));
+  });
+  return { modes, error: { z0, permittivity }, unknowns: good!.unknowns };
+}
+
+function solveOn(
+  shape: Shape,
+  names: readonly ModeName[],
+  fineness: Fineness,
+): { modes: FieldMode[]; unknowns: number } {
+  const mesh = meshOf(outlineOf(shape), fineness);
+  const kernel = kernelOf(mesh);
+  return { modes: names.map((name) => modeOn(shape, mesh, kernel, name)), unknowns: mesh.count };
+}
+
+/** A step this small in permittivity gives a slope to a millionth. */
+const slopeStep = 1e-3;
+
+function modeOn({ section }: Shape, mesh: Mesh, kernel: Kernel, name: ModeName): FieldMode {
+  const symmetry: Symmetry = name === 'odd' ? -1 : 1;
+  const alone = name === 'single';
+  const charges = airCharges(mesh, kernel, symmetry);
+  const airCharge = chargeOf(mesh, charges);
+  const airOhm = vacuumImpedance / (airCharge * (alone ? 2 : 1));
+  const given = [...section.sheets, ...(section.mask ? [section.mask] : [])].map(({ dk }) => dk);
+  const permittivityAt = (dks: readonly number[]): number =>
+    mesh.count === mesh.copperCount ? dks[0]! : freeCharge(mesh, kernel, symmetry, [...dks, 1]) / airCharge;
+  const effectivePermittivity = permittivityAt(given);
+  const filling = given.map((dk, k) => {
+    const moved = (by: number) => permittivityAt(given.map((other, i) => (i === k ? dk * (1 + by) : other)));
+    return (moved(slopeStep) - moved(-slopeStep)) / (2 * slopeStep * dk);
+  });
+  const shares = sharesOf(mesh, charges, symmetry, alone);
+  const z0Ohm = airOhm / Math.sqrt(effectivePermittivity);
+  return { z0Ohm, effectivePermittivity, airOhm, filling, shares };
+}
