@@ -11,6 +11,8 @@ import { wireCapacitances, type Wire } from './wires';
 export interface CrossSection {
   readonly modes: readonly number[];
   readonly angleRad: number;
+  /** Estimate of what is left of the solver's mesh error, as a share; 0 where the section is solved in closed form or by series. */
+  readonly meshErrorShare: number;
 }
 
 const even = Math.PI / 4;
@@ -28,10 +30,10 @@ export function crossSection(via: Via, barrel: Barrel, placed: PlacedLayer, diam
   if (!plane && via.returnVias?.length) return amongReturns(via, diameterM);
   const outerM = plane ? sizeOn(via.antipadM, placed.layer.name)! : returnDiameterM(via, barrel, placed)!;
   if (via.pitchM === undefined) {
-    return { modes: [(2 * Math.PI) / Math.log(outerM / diameterM)], angleRad: single };
+    return { modes: [(2 * Math.PI) / Math.log(outerM / diameterM)], angleRad: single, meshErrorShare: 0 };
   }
   const pair = pairInOpening(diameterM, outerM, via.pitchM);
-  return { modes: [pair.even, pair.odd], angleRad: even };
+  return { modes: [pair.even, pair.odd], angleRad: even, meshErrorShare: pair.meshErrorShare };
 }
 
 /** Where the legs stand about the via's middle: a pair lies along x, p at -pitch/2, n at +pitch/2. */
@@ -57,7 +59,7 @@ function amongReturns(via: Via, diameterM: number): CrossSection {
     const wires = [...legs.map((at) => wire(at, diameterM)), ...returns.map((at) => wire(at, via.drillM))];
     const c = wireCapacitances(wires, legs.length);
     return legs.length === 1
-      ? { modes: [c[0]!], angleRad: single }
+      ? { modes: [c[0]!], angleRad: single, meshErrorShare: 0 }
       : modesOf(c[0]!, (c[1]! + c[2]!) / 2, c[3]!);
   });
 }
@@ -68,10 +70,10 @@ const alike = 1e-9;
 /** Eigenvalues and the angle of a symmetric 2 x 2 matrix; its modes travel alike, for the space is homogeneous. */
 function modesOf(p: number, mutual: number, n: number): CrossSection {
   if (Math.abs(p - n) <= alike * (p + n)) {
-    return { modes: [(p + n) / 2 + mutual, (p + n) / 2 - mutual], angleRad: even };
+    return { modes: [(p + n) / 2 + mutual, (p + n) / 2 - mutual], angleRad: even, meshErrorShare: 0 };
   }
   // The first mode is the even-like one: the lower capacitance, for the mutual term is below 0.
   const half = Math.hypot((p - n) / 2, mutual);
   const angleRad = Math.atan2(-2 * mutual, n - p) / 2;
-  return { modes: [(p + n) / 2 - half, (p + n) / 2 + half], angleRad };
+  return { modes: [(p + n) / 2 - half, (p + n) / 2 + half], angleRad, meshErrorShare: 0 };
 }

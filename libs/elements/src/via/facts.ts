@@ -27,7 +27,16 @@ export interface ViaFacts {
   readonly notchHz: number | null;
   /** Half of the notch; null where no stub limits the model. */
   readonly validToHz: number | null;
+  /** The largest estimate of mesh error among the sections, as a share; 0 where none needed a mesh. */
+  readonly meshErrorShare: number;
+  /** The publications the sections come from. */
+  readonly sources: readonly string[];
 }
+
+const coaxialSource = 'coaxial line about the barrel (60 ohm/sqrt(er) x ln(antipad/drill))';
+const rodsSource = 'two rods in their antipads, method of moments (Harrington, 1968)';
+const wiresSource = 'round wires against the return vias, by multipoles (Smythe, ch. 4)';
+const padSource = 'pad faces as steps of a coaxial line (Somlo, 1967)';
 
 /**
  * What the model of a via is made of, for a reviewer and for a drawing.
@@ -46,6 +55,7 @@ export function viaFacts(via: Via, signaling: Signaling, stackup: Stackup | unde
       return [{ layer, part, what, lengthM, permittivity, ...impedances }];
     });
   const notchHz = notchOf(model);
+  const pieces = [...sections.above, ...sections.through, ...sections.below];
   return {
     sections: [
       ...told('above', sections.above),
@@ -59,5 +69,11 @@ export function viaFacts(via: Via, signaling: Signaling, stackup: Stackup | unde
     },
     notchHz,
     validToHz: notchHz === null ? null : notchHz / 2,
+    meshErrorShare: Math.max(0, ...pieces.map((piece) => piece.meshErrorShare)),
+    sources: [
+      via.pitchM === undefined ? coaxialSource : rodsSource,
+      ...(via.returnVias?.length ? [wiresSource] : []),
+      ...(pieces.some(({ what }) => what === 'pad-face') ? [padSource] : []),
+    ],
   };
 }

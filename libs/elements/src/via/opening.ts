@@ -10,7 +10,7 @@ export interface PairCapacitance {
 }
 
 /** Elements on half a rod and on half of its antipad's edge, in the coarser of two meshes. */
-const coarse = 40;
+const coarse = 24;
 const remembered = rememberer<PairCapacitance>();
 
 /**

@@ -104,6 +104,7 @@ function facePiece(via: Via, barrel: Barrel, { pad, beyond }: Face, material: nu
   const across = crossSection(via, barrel, pad, padM * 2);
   return {
     angleRad: across.angleRad,
+    meshErrorShare: across.meshErrorShare,
     modes: across.modes.map((mode) =>
       stepCapacitanceM(via.drillM / 2, padM, padM * Math.exp((2 * Math.PI) / mode)),
     ),

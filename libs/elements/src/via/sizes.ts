@@ -41,6 +41,6 @@ export function returnDiameterM(via: Via, barrel: Barrel, placed: PlacedLayer): 
   const diameters = near
     .map(({ layer }) => sizeOn(via.antipadM, layer.name))
     .filter((diameter) => diameter !== undefined && diameter > 0) as number[];
-  if (diameters.length === 0) return undefined;
+  if (diameters.every((diameter) => diameter === diameters[0])) return diameters[0];
   return Math.exp(diameters.reduce((sum, diameter) => sum + Math.log(diameter), 0) / diameters.length);
 }
