@@ -9,8 +9,9 @@ export interface PairCapacitance {
   readonly meshErrorShare: number;
 }
 
-/** Elements on half a rod and on half of its antipad's edge, in the coarser of two meshes. */
-const coarse = 24;
+/** Elements on half a rod and on half of its antipad's edge, in the coarser of two meshes: more where a gap is narrow. */
+const fewest = 24;
+const most = 96;
 const remembered = rememberer<PairCapacitance>();
 
 /**
@@ -26,6 +27,8 @@ export function pairInOpening(rodM: number, antipadM: number, pitchM: number): P
   }
   const [rod, antipad] = [rodM / pitchM, antipadM / pitchM];
   return remembered(`${rod.toPrecision(12)} ${antipad.toPrecision(12)}`, () => {
+    const gap = Math.min(1 - rod, (antipad - rod) / 2);
+    const coarse = Math.min(most, Math.max(fewest, Math.ceil((4 * rod) / gap)));
     const [rough, fine] = [coarse, 2 * coarse].map((elements) => momentSolution(rod, antipad, elements));
     // The error of straight elements falls with the square of their length; extrapolated to none.
     const [even, odd] = [0, 1].map((mode) => (4 * fine![mode]! - rough![mode]!) / 3);
@@ -99,10 +102,23 @@ function quarterMesh(rod: number, antipad: number, pitch: number, elements: numb
   // Charge grows without bound at the edge where the two circles meet: elements shrink towards it.
   const along = (k: number): number => end * (1 - (1 - k / elements) ** 3);
   for (let k = 0; k < elements; k++) {
-    put(k, rod / 2, (Math.PI * k) / elements, (Math.PI * (k + 1)) / elements);
+    put(k, rod / 2, aroundRod(k / elements, rod / pitch), aroundRod((k + 1) / elements, rod / pitch));
     put(elements + k, antipad / 2, along(k), along(k + 1));
   }
   return mesh;
+}
+
+/**
+ * Angle on the right rod at a share of its elements, 0 on the outer side. Against each other, close rods carry their charge
+ * where they face, evenly in the bipolar angle; driven alike, on the outer side: the mean of that spacing and of an even one.
+ */
+function aroundRod(share: number, rod: number): number {
+  const focus = Math.sqrt(1 - rod * rod);
+  const bipolar = Math.PI * share;
+  // x/focus = sinh t/(cosh t - cos s), y/focus = sin s/(cosh t - cos s), with cosh t = pitch/rod and sinh t = focus/rod.
+  const size = 1 / rod - Math.cos(bipolar);
+  const angle = Math.atan2((focus * Math.sin(bipolar)) / size, (focus * focus) / rod / size - 1);
+  return (angle + bipolar) / 2;
 }
 
 /** Potential of an element's unit charge a length at a point, times 2 pi: minus the integral of ln r along it, divided by 2 pi. */

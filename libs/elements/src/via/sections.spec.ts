@@ -60,6 +60,7 @@ describe('two rods in their antipads', () => {
   });
 
   it.each([
+    [0.25, 0.252],
     [0.25, 0.3],
     [0.25, 0.5],
     [0.25, 0.8],
@@ -87,6 +88,7 @@ describe('two rods in their antipads', () => {
   it.each([
     [0.25, 0.9, 0.5],
     [0.5, 0.9, 0.6],
+    [0.6, 0.62, 0.61],
     [0.25, 100, 0.3],
   ])(
     'of %d in antipads of %d at %d are solved to 0.1 percent by their own estimate',
