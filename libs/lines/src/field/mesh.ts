@@ -102,15 +102,15 @@ function cutsOf(piece: Piece, all: readonly Piece[], { copper, between, open }: 
       return bothEnds(side ? Math.max(3, Math.round(copper * 0.6)) : copper);
     }
     case 'start':
-      return towardsStart(piece.surface === surface.between ? between : copper);
+      return towardsStart(piece.surface <= surface.side ? copper : between);
     case 'end':
-      return towardsStart(piece.surface === surface.between ? between : copper).map((_, i, cuts) => {
-        return 1 - cuts[cuts.length - 1 - i]!;
-      });
-    case 'none':
-      return Float64Array.from({ length: between + 1 }, (_, i) => i / between);
-    case 'outward':
-      return outward(open, Math.min(finest(all, copper) / length, 0.5 / open));
+      return turned(towardsStart(piece.surface <= surface.side ? copper : between));
+    case 'inward':
+    case 'outward': {
+      const first = piece.firstM ?? finest(all, copper);
+      const cuts = outward(open, Math.min(first / length, 0.5 / open));
+      return piece.crowding === 'outward' ? cuts : turned(cuts);
+    }
   }
 }
 
@@ -124,6 +124,10 @@ function finest(all: readonly Piece[], copper: number): number {
 
 function lengthOf({ from, to }: Piece): number {
   return Math.hypot(to[0] - from[0], to[1] - from[1]);
+}
+
+function turned(cuts: Float64Array): Float64Array {
+  return cuts.map((_, i) => 1 - cuts[cuts.length - 1 - i]!);
 }
 
 function towardsStart(count: number): Float64Array {

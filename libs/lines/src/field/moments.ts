@@ -1,7 +1,7 @@
 import { vacuumImpedance } from '../constants';
 import type { WallShares } from '../conductor';
 import type { Kernel } from './kernel';
-import { solveDense } from './linear-system';
+import { factorize, solve, solveTransposed } from './linear-system';
 import type { Mesh } from './mesh';
 import { surface } from './outline';
 
@@ -18,9 +18,7 @@ export function airCharges(mesh: Mesh, kernel: Kernel, symmetry: Symmetry): Floa
       a[row * copperCount + column] = kernel.own[at]! + symmetry * kernel.mirrored[at]!;
     }
   }
-  const charges = voltages(mesh, copperCount);
-  solveDense(a, charges, copperCount);
-  return charges;
+  return solve(factorize(a, copperCount), voltages(mesh, copperCount));
 }
 
 function voltages({ traceCount }: Mesh, count: number): Float64Array {
@@ -34,33 +32,54 @@ export function chargeOf({ traceCount, half }: Mesh, density: Float64Array): num
   return charge;
 }
 
+/** Free charge of the trace over eps0, and its slope by the permittivity of each material. */
+export interface Filled {
+  readonly charge: number;
+  readonly slopes: Float64Array;
+}
+
 /**
- * Free charge of the trace over eps0 with dielectrics: unknown are all charges, bound ones included, as if in air. On a face
- * between two dielectrics the displacement is continuous: with E the field of all other charges across it,
+ * Free charge of the trace with dielectrics: unknown are all charges, bound ones included, as if in air. On a face between two
+ * dielectrics the displacement is continuous: with E the field of all other charges across it,
  * (eL - eR) E + (eL + eR) sigma/2 = 0; free charge on copper is the total times the permittivity outside it.
+ * The slopes come from the adjoint system, so that no material asks for a solution of its own.
  */
 export function freeCharge(
   mesh: Mesh,
   kernel: Kernel,
   symmetry: Symmetry,
   permittivities: readonly number[],
-): number {
+): Filled {
   const { count, copperCount, traceCount, left, right, half } = mesh;
   const a = new Float64Array(count * count);
   for (let row = 0; row < count; row++) {
-    const scale = row < copperCount ? 1 : permittivities[left[row]!]! - permittivities[right[row]!]!;
+    const [l, r] = [permittivities[left[row]!]!, permittivities[right[row]!]!];
+    const scale = row < copperCount ? 1 : l - r;
     for (let at = row * count; at < (row + 1) * count; at++) {
       a[at] = scale * (kernel.own[at]! + symmetry * kernel.mirrored[at]!);
     }
-    if (row >= copperCount) {
-      a[row * count + row]! += (permittivities[left[row]!]! + permittivities[right[row]!]!) / 2;
-    }
+    if (row >= copperCount) a[row * count + row]! += (l + r) / 2;
   }
-  const density = voltages(mesh, count);
-  solveDense(a, density, count);
+  const factors = factorize(a, count);
+  const density = solve(factors, voltages(mesh, count));
+  const weights = new Float64Array(count);
+  const slopes = new Float64Array(permittivities.length);
   let charge = 0;
-  for (let k = 0; k < traceCount; k++) charge += 2 * half[k]! * density[k]! * permittivities[left[k]!]!;
-  return charge;
+  for (let k = 0; k < traceCount; k++) {
+    weights[k] = 2 * half[k]! * permittivities[left[k]!]!;
+    charge += weights[k]! * density[k]!;
+    slopes[left[k]!]! += 2 * half[k]! * density[k]!;
+  }
+  const adjoint = solveTransposed(factors, weights);
+  for (let row = copperCount; row < count; row++) {
+    let field = 0;
+    for (let column = 0, at = row * count; column < count; column++, at++) {
+      field += (kernel.own[at]! + symmetry * kernel.mirrored[at]!) * density[column]!;
+    }
+    slopes[left[row]!]! -= adjoint[row]! * (density[row]! / 2 + field);
+    slopes[right[row]!]! -= adjoint[row]! * (density[row]! / 2 - field);
+  }
+  return { charge, slopes };
 }
 
 /**

@@ -4,8 +4,8 @@ import { sameHeightM, type Shape } from './section';
 export const surface = { lower: 0, upper: 1, side: 2, planeAbove: 3, between: 4 } as const;
 export type Surface = (typeof surface)[keyof typeof surface];
 
-/** How segments crowd: at its start, at both ends, or at neither. */
-export type Crowding = 'start' | 'end' | 'both' | 'none' | 'outward';
+/** Where segments crowd: at one end, at both, or growing by a ratio away from the copper. */
+export type Crowding = 'start' | 'end' | 'both' | 'outward' | 'inward';
 
 /**
  * A straight piece of the right half of a section. Copper knows the material outside it; a piece between two dielectrics the
@@ -21,6 +21,8 @@ export interface Piece {
   readonly right: number;
   /** Outer angle over pi at each end where the copper has a corner; 0 where it has none. */
   readonly corners: readonly [number, number];
+  /** Growing outward: the first segment where the copper's own corners don't set it. */
+  readonly firstM?: number;
 }
 
 /** Half width reached by open interfaces, in heights of what they belong to: beyond, what is left weighs under 1e-5. */
@@ -124,29 +126,51 @@ function faceAt(shape: Shape, yM: number, below: number, above: number, endM: nu
   const highM = lowM + section.trace.thicknessM;
   const common = { surface: surface.between, left: above, right: below, corners: [0, 0] as const };
   const through = yM > lowM - sameHeightM && yM < highM + sameHeightM;
-  if (!through) {
-    const kneeM = centreM + Math.max(shape.lowerWidthM, shape.upperWidthM) / 2;
-    return [
-      { ...common, from: [0, yM], to: [kneeM, yM], crowding: 'none' },
-      { ...common, from: [kneeM, yM], to: [endM, yM], crowding: 'outward' },
-    ];
-  }
+  if (!through) return pastCopper(shape, common, yM, endM);
   const halfM = halfWidthAt(shape, Math.min(Math.max(yM, lowM), highM));
   const outer: Piece = { ...common, from: [centreM + halfM, yM], to: [endM, yM], crowding: 'outward' };
-  return section.gapM === undefined
-    ? [outer]
-    : [{ ...common, from: [0, yM], to: [centreM - halfM, yM], crowding: 'end' }, outer];
+  return section.gapM === undefined ? [outer] : [innerFace(common, yM, centreM - halfM, lowM), outer];
+}
+
+/** Between the legs of a pair: where they stand far apart it grows inward from the copper as the outer face does. */
+function innerFace(common: Common, yM: number, toM: number, heightM: number): Piece {
+  const crowding = toM > 2 * heightM ? 'inward' : 'end';
+  return { ...common, from: [0, yM], to: [toM, yM], crowding };
+}
+
+type Common = Pick<Piece, 'surface' | 'left' | 'right' | 'corners'>;
+
+/** A level face that passes the copper at a distance: crowded over and under its edges, then outward. */
+function pastCopper(shape: Shape, common: Common, yM: number, endM: number): Piece[] {
+  const { section, centreM } = shape;
+  const halfM = Math.max(shape.lowerWidthM, shape.upperWidthM) / 2;
+  const edgeM = centreM + halfM;
+  const spans: [number, number, Crowding][] =
+    section.gapM === undefined
+      ? [[0, edgeM, 'end']]
+      : [
+          [0, centreM - halfM, 'end'],
+          [centreM - halfM, centreM, 'start'],
+          [centreM, edgeM, 'end'],
+        ];
+  const apartM = Math.min(
+    Math.abs(yM - section.traceAtM),
+    Math.abs(yM - section.traceAtM - section.trace.thicknessM),
+  );
+  return [...spans, [edgeM, endM, 'outward'] as const].map(([from, to, crowding]) => ({
+    ...common,
+    from: [from, yM],
+    to: [to, yM],
+    crowding,
+    firstM: apartM / 3,
+  }));
 }
 
 function planeAbove(shape: Shape, endM: number): Piece[] {
   const yM = shape.heightM;
   const material = shape.section.sheets.length - 1;
-  const kneeM = shape.centreM + Math.max(shape.lowerWidthM, shape.upperWidthM) / 2;
   const common = { surface: surface.planeAbove, left: material, right: material, corners: [0, 0] as const };
-  return [
-    { ...common, from: [0, yM], to: [kneeM, yM], crowding: 'end' },
-    { ...common, from: [kneeM, yM], to: [endM, yM], crowding: 'outward' },
-  ];
+  return pastCopper(shape, common, yM, endM);
 }
 
 /** The mask's outer face: along the laminate, up the walls parallel to them, over the top. Its left looks out. */

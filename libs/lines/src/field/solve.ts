@@ -22,7 +22,7 @@ export interface FieldMode {
 
 export interface FieldSolution {
   readonly modes: Partial<Record<ModeName, FieldMode>>;
-  /** Relative, from two meshes. */
+  /** Relative, from two meshes: the difference between them, which the extrapolated value stays well inside. */
   readonly error: { readonly z0: number; readonly permittivity: number };
   /** Segments of the finer mesh. */
   readonly unknowns: number;
@@ -32,6 +32,8 @@ const coarse: Fineness = { copper: 8, between: 6, open: 14 };
 const fine: Fineness = { copper: 12, between: 9, open: 21 };
 /** Halving the segments takes the error down by about this power of two. */
 const order = 2;
+/** What the cut faces leave open beside the meshes' difference. */
+const leastError = 1e-4;
 
 /**
  * Impedance, effective permittivity, fillings and wall shares of a cross-section by the method of moments: charges on copper and
@@ -57,7 +59,7 @@ export function solveSection(section: FieldSection): FieldSolution {
       filling: b.filling.map((_, k) => extrapolated((mode) => mode.filling[k]!)),
       shares: b.shares,
     };
-    z0 = Math.max(z0, Math.abs(a.z0Ohm / b.z0Ohm - 1));
+    z0 = Math.max(z0, leastError + Math.abs(a.z0Ohm / b.z0Ohm - 1));
     permittivity = Math.max(permittivity, Math.abs(a.effectivePermittivity / b.effectivePermittivity - 1));
   });
   return { modes, error: { z0, permittivity }, unknowns: good!.unknowns };
@@ -73,9 +75,6 @@ function solveOn(
   return { modes: names.map((name) => modeOn(shape, mesh, kernel, name)), unknowns: mesh.count };
 }
 
-/** A step this small in permittivity gives a slope to a millionth. */
-const slopeStep = 1e-3;
-
 function modeOn({ section }: Shape, mesh: Mesh, kernel: Kernel, name: ModeName): FieldMode {
   const symmetry: Symmetry = name === 'odd' ? -1 : 1;
   const alone = name === 'single';
@@ -83,13 +82,11 @@ function modeOn({ section }: Shape, mesh: Mesh, kernel: Kernel, name: ModeName):
   const airCharge = chargeOf(mesh, charges);
   const airOhm = vacuumImpedance / (airCharge * (alone ? 2 : 1));
   const given = [...section.sheets, ...(section.mask ? [section.mask] : [])].map(({ dk }) => dk);
-  const permittivityAt = (dks: readonly number[]): number =>
-    mesh.count === mesh.copperCount ? dks[0]! : freeCharge(mesh, kernel, symmetry, [...dks, 1]) / airCharge;
-  const effectivePermittivity = permittivityAt(given);
-  const filling = given.map((dk, k) => {
-    const moved = (by: number) => permittivityAt(given.map((other, i) => (i === k ? dk * (1 + by) : other)));
-    return (moved(slopeStep) - moved(-slopeStep)) / (2 * slopeStep * dk);
-  });
+  // Without a face between dielectrics one sheet fills all.
+  const homogeneous = mesh.count === mesh.copperCount;
+  const filled = homogeneous ? undefined : freeCharge(mesh, kernel, symmetry, [...given, 1]);
+  const effectivePermittivity = filled ? filled.charge / airCharge : given[0]!;
+  const filling = given.map((_, k) => (filled ? filled.slopes[k]! / airCharge : 1));
   const shares = sharesOf(mesh, charges, symmetry, alone);
   const z0Ohm = airOhm / Math.sqrt(effectivePermittivity);
   return { z0Ohm, effectivePermittivity, airOhm, filling, shares };
