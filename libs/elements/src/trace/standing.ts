@@ -2,7 +2,7 @@ import type { ElementOf, Stackup, Standing } from '@tollgate/contracts';
 import { LineError } from '@tollgate/lines';
 import { ElementError } from '../types';
 import { isCopper } from './layers';
-import { modelTrace } from './model';
+import { solveTrace } from './field-model';
 import { sectionOf } from './section';
 
 /** What a trace's model may be called, and why. */
@@ -15,7 +15,7 @@ export function traceStanding(
     return { standing: 'assumed', reason: 'the roughness of its copper is not given' };
   }
   try {
-    const { standing, source } = modelTrace(sectionOf(stackup, trace), new Float64Array(0));
+    const { standing, source } = solveTrace(sectionOf(stackup, trace), new Float64Array(0));
     return { standing, reason: source };
   } catch (error) {
     if (error instanceof ElementError || error instanceof LineError) {

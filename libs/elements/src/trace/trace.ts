@@ -1,5 +1,5 @@
 import type { ElementOf, Signaling, Stackup } from '@tollgate/contracts';
-import { LineError, rectangleOf, type LineMode, type ModeName } from '@tollgate/lines';
+import { LineError, shapeOf, type LineMode, type ModeName } from '@tollgate/lines';
 import { cascade4Into } from '@tollgate/network';
 import { dbPerNeper, lightSpeedMPerS } from '../constants';
 import { pairOfLegs, pairOfModes } from '../legs';
@@ -13,7 +13,7 @@ import {
   type LineFacts,
 } from '../types';
 import { legLengths } from './legs-of-path';
-import { modelTrace } from './model';
+import { fieldOf, solveTrace } from './field-model';
 import { sectionOf } from './section';
 
 type Trace = ElementOf<'trace'>;
@@ -51,8 +51,7 @@ export function traceProblems(
         mend: 'Use longer pieces between the bends, or a narrower pair.',
       });
     }
-    const { traceAtM, ...section } = sectionOf(stackup, trace);
-    rectangleOf({ ...section, belowM: traceAtM });
+    shapeOf(fieldOf(sectionOf(stackup, trace)).field);
   });
   return found ? [...problems, found] : problems;
 }
@@ -93,7 +92,7 @@ function ofLine<Result>(run: () => Result): Result {
  */
 export function buildTrace(trace: Trace, frequenciesHz: Float64Array, context: BuildContext): BuiltElement {
   const section = sectionOf(context.stackup, trace);
-  const { modes, cautions } = ofLine(() => modelTrace(section, frequenciesHz));
+  const { modes, cautions } = ofLine(() => solveTrace(section, frequenciesHz));
   const warnings = [...section.warnings, ...cautions];
   const line = factsOf(modes);
   const { pM, nM } = legLengths(trace);
@@ -104,7 +103,7 @@ export function buildTrace(trace: Trace, frequenciesHz: Float64Array, context: B
   const points = frequenciesHz.length;
   const s = pairOfModes(uniform(modes.even!, sharedM), uniform(modes.odd!, sharedM), points);
   if (pM !== nM) {
-    const alone = ofLine(() => modelTrace({ ...section, gapM: undefined }, frequenciesHz)).modes.single!;
+    const alone = ofLine(() => solveTrace({ ...section, gapM: undefined }, frequenciesHz)).modes.single!;
     const legs = [pM, nM].map((lengthM) => uniform(alone, lengthM - sharedM));
     cascade4Into(s, s, pairOfLegs(legs[0]!, legs[1]!, points), points);
   }
@@ -149,7 +148,7 @@ export function traceTollDb(
 ): Float64Array | undefined {
   const { pM, nM } = legLengths(trace);
   if (pM !== nM) return undefined;
-  const { modes } = ofLine(() => modelTrace(sectionOf(context.stackup, trace), frequenciesHz));
+  const { modes } = ofLine(() => solveTrace(sectionOf(context.stackup, trace), frequenciesHz));
   const { seriesOhmPerM: z, shuntSPerM: y } = (modes.single ?? modes.odd)!;
   return frequenciesHz.map((_, point) => {
     const k = point * 2;
@@ -164,7 +163,7 @@ export function traceTollDb(
 
 /** One-way delay in seconds of the slower mode along the longer leg. */
 export function traceDelayS(trace: Trace, context: BuildContext): number {
-  const { modes } = ofLine(() => modelTrace(sectionOf(context.stackup, trace), new Float64Array(0)));
+  const { modes } = ofLine(() => solveTrace(sectionOf(context.stackup, trace), new Float64Array(0)));
   const slowest = Math.max(...Object.values(modes).map((mode) => mode.effectivePermittivity));
   const { pM, nM } = legLengths(trace);
   return (Math.max(pM, nM) * Math.sqrt(slowest)) / lightSpeedMPerS;
