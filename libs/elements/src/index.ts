@@ -1,3 +1,4 @@
+export * from './desk';
 export { buildElement, elementCoverage, elementFiles } from './element';
 export { elementDelayS, elementTollDb } from './loss';
 export { elementProblems } from './problems';

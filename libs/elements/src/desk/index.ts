@@ -1,0 +1,10 @@
+export {
+  crossSectionOf,
+  type ClosedForm,
+  type CrossSectionFacts,
+  type ModeFacts,
+  type ModesFacts,
+} from './cross-section-desk';
+export type { SectionDrawing } from './drawing';
+export { sensitivitiesOf, type Sensitivity } from './sensitivities';
+export { impedanceOf, synthesize, type Wanted, type WantedMode } from './synthesis';
