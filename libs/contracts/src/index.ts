@@ -10,6 +10,8 @@ export * from './channel-file/kinds';
 export * from './channel-file/limits';
 export * from './channel-file/parse';
 export * from './channel-file/stackup';
+export * from './channel-file/stackup-cautions';
+export * from './channel-file/stackup-rules';
 export { portOrders, type PortOrder, type PortPicks } from './channel-file/touchstone-kind';
 export * from './check/response';
 export * from './check/verdicts';

@@ -33,6 +33,8 @@ export interface Right {
 const boardMakers: readonly Role[] = ['layout-engineer', 'project-manager'];
 const administrators: readonly Role[] = ['administrator'];
 const engineers: readonly Role[] = ['layout-engineer'];
+/** A reviewer may enter what the fabricator answered; it then counts as a change of theirs when it comes to signing. */
+const stackupMakers: readonly Role[] = ['layout-engineer', 'si-reviewer'];
 
 export const rights = {
   'health.read': { scope: 'public' },
@@ -67,6 +69,11 @@ export const rights = {
   'channel.create': { scope: 'member', roles: engineers },
   'channel.change': { scope: 'member', roles: engineers },
   'channel.check': { scope: 'member' },
+  'stackup.read': { scope: 'member' },
+  'stackup.create': { scope: 'member', roles: stackupMakers },
+  'stackup.use': { scope: 'member', roles: engineers },
+  'stackups.list': { scope: 'signed-in' },
+  'section.solve': { scope: 'signed-in' },
 } as const satisfies Record<string, Right>;
 
 export type Action = keyof typeof rights;

@@ -5,4 +5,5 @@ export * from './masks';
 export * from './people';
 export * from './problem';
 export * from './session';
+export * from './stackups';
 export * from './stream';
