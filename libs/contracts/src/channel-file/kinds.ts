@@ -3,6 +3,7 @@ import { quantityField, type QuantityField } from '../quantity';
 import { elementSchemas, type ChannelElement, type ElementKind } from './channel-file';
 import { kindOf } from './circuit-kinds';
 import type { Signaling } from './common';
+import type { Stackup } from './stackup';
 
 /** Where a kind may stand: single-ended channels, pairs, or both (then once in each leg of a pair). */
 export type KindUse = Signaling | 'both';
@@ -179,8 +180,11 @@ function shapeOf(schema: z.ZodType): Record<string, z.ZodType> | undefined {
     : undefined;
 }
 
-/** A new element with values that a person would start from; each is then edited in the form. */
-export function newElement(kind: ElementKind, signaling: Signaling): ChannelElement {
+/** A new element with values that a person would start from, on layers of the stackup; each is then edited in the form. */
+export function newElement(kind: ElementKind, signaling: Signaling, stackup?: Stackup): ChannelElement {
+  const signals = (stackup?.layers ?? []).flatMap((layer) =>
+    layer.kind === 'copper' && layer.role === 'signal' ? [layer.name] : [],
+  );
   const starts: { [Kind in ElementKind]: () => Extract<ChannelElement, { kind: Kind }> } = {
     line: () => ({ kind: 'line', ...startLine }),
     'rlgc-line': () => ({
@@ -237,15 +241,15 @@ export function newElement(kind: ElementKind, signaling: Signaling): ChannelElem
     touchstone: () => ({ kind: 'touchstone', ...startPart }),
     trace: () => ({
       kind: 'trace',
-      layer: '',
+      layer: signals[0] ?? '',
       widthM: 100e-6,
       lengthM: 0.02,
       ...(signaling === 'differential' ? { gapM: 150e-6 } : {}),
     }),
     via: () => ({
       kind: 'via',
-      fromLayer: '',
-      toLayer: '',
+      fromLayer: signals[0] ?? '',
+      toLayer: signals.at(-1) ?? '',
       drillM: 250e-6,
       padM: 500e-6,
       antipadM: 800e-6,

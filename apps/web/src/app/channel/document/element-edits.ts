@@ -22,7 +22,10 @@ export function withNewElement(
   afterId: string | undefined,
 ): { document: CompleteChannel; id: string } {
   const id = freeId(kindDescription(kind).prefix, elementIds(document));
-  return { document: inserted(document, { ...newElement(kind, document.signaling), id }, afterId), id };
+  return {
+    document: inserted(document, { ...newElement(kind, document.signaling, document.stackup), id }, afterId),
+    id,
+  };
 }
 
 /** A second element like the one named, right behind it. */

@@ -7,6 +7,7 @@ import { pathText, type Path } from '../document/at-path';
 import { PickEntry } from '../entries/pick-entry';
 import { QuantityEntry } from '../entries/quantity-entry';
 import { TextEntry } from '../entries/text-entry';
+import { BoardFields } from './board-fields';
 import { CircuitEditor } from './circuit-editor';
 import { ElementQuantities } from './element-quantities';
 import { PartFields } from './part-fields';
@@ -16,7 +17,7 @@ const allotmentField = { dimension: 'loss', label: 'Allotted', unit: 'dB', min: 
 /** Everything about the selected element: its quantities, where they come from, what the budget gave it. */
 @Component({
   selector: 'tg-element-form',
-  imports: [CircuitEditor, ElementQuantities, PartFields, PickEntry, QuantityEntry, TextEntry],
+  imports: [BoardFields, CircuitEditor, ElementQuantities, PartFields, PickEntry, QuantityEntry, TextEntry],
   changeDetection: ChangeDetectionStrategy.OnPush,
   templateUrl: './element-form.html',
   styleUrl: './element-form.scss',
@@ -41,7 +42,6 @@ export class ElementForm {
     return typeof source === 'string' ? { text: source } : (source ?? {});
   });
   protected readonly base = computed(() => `elements[${this.store.selectedIndex()}]`);
-  protected readonly drawn = computed(() => ['trace', 'via'].includes(this.element()?.kind ?? ''));
   protected readonly problem = computed(() => this.store.problemAt(this.base()));
 
   protected set(path: Path, value: unknown): void {

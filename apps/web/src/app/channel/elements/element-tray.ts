@@ -5,12 +5,10 @@ import { elementKinds, type ElementKind, type KindDescription } from '@tollgate/
 import { ChannelStore } from '../document/channel-store';
 
 const groups: readonly { readonly group: KindDescription['group']; readonly title: string }[] = [
+  { group: 'board', title: 'On the board' },
   { group: 'part', title: 'Parts' },
   { group: 'circuit', title: 'Circuit' },
 ];
-
-/** Kinds that need the floor plan and the stackup's editor to be drawn. */
-const drawnOnly = new Set<ElementKind>(['trace', 'via']);
 
 /** Every kind that may stand in this channel, by group. */
 @Component({
@@ -55,9 +53,7 @@ export class ElementTray {
       title,
       kinds: elementKinds.filter(
         (kind) =>
-          kind.group === group &&
-          !drawnOnly.has(kind.kind) &&
-          (kind.use === 'both' || kind.use === this.store.document()?.signaling),
+          kind.group === group && (kind.use === 'both' || kind.use === this.store.document()?.signaling),
       ),
     })),
   );
