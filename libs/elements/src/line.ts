@@ -54,22 +54,26 @@ export function passInto(
   attenuationNp: number,
   phaseRad: number,
 ): void {
-  const one = Math.exp(-attenuationNp);
-  const pRe = one * Math.cos(phaseRad);
-  const pIm = -one * Math.sin(phaseRad);
-  const two = Math.exp(-2 * attenuationNp);
-  const p2Re = two * Math.cos(2 * phaseRad);
-  const p2Im = -two * Math.sin(2 * phaseRad);
+  // P = e^-a (cos - j sin); 1 - P^2 without cancellation for a short line: 1 - e^-2a = -m (2 + m), 1 - cos 2p = 2 sin^2 p.
+  // e^-a keeps its own digits where it is small, e^-a - 1 where a is.
+  const short = attenuationNp < 0.5;
+  const raw = short ? Math.expm1(-attenuationNp) : Math.exp(-attenuationNp);
+  const less = short ? raw : raw - 1;
+  const one = short ? 1 + raw : raw;
+  const two = one * one;
+  const cos = Math.cos(phaseRad);
+  const sin = Math.sin(phaseRad);
+  const pRe = one * cos;
+  const pIm = -one * sin;
+  const turned = 2 * two * sin;
+  const nRe = turned * sin - less * (2 + less);
+  const nIm = turned * cos;
   const g2Re = gRe * gRe - gIm * gIm;
   const g2Im = 2 * gRe * gIm;
-  const dRe = 1 - (g2Re * p2Re - g2Im * p2Im);
-  const dIm = -(g2Re * p2Im + g2Im * p2Re);
+  // 1 - G^2 P^2 = (1 - G^2) + G^2 (1 - P^2)
+  const dRe = 1 - g2Re + (g2Re * nRe - g2Im * nIm);
+  const dIm = -g2Im + (g2Re * nIm + g2Im * nRe);
   const size = dRe * dRe + dIm * dIm;
-  // 1 - P^2 loses digits for a short lossless line; sinh keeps them: 1 - P^2 = 2 P sinh(gamma l).
-  const shRe = Math.sinh(attenuationNp) * Math.cos(phaseRad);
-  const shIm = Math.cosh(attenuationNp) * Math.sin(phaseRad);
-  const nRe = attenuationNp > 20 ? 1 - p2Re : 2 * (pRe * shRe - pIm * shIm);
-  const nIm = attenuationNp > 20 ? -p2Im : 2 * (pRe * shIm + pIm * shRe);
   const rRe = gRe * nRe - gIm * nIm;
   const rIm = gRe * nIm + gIm * nRe;
   const tRe = pRe * (1 - g2Re) + pIm * g2Im;

@@ -13,7 +13,8 @@ const singular = 1e-30;
  */
 export function cascade2Into(out: Float64Array, a: Float64Array, b: Float64Array, points: number): number {
   let trapped = 0;
-  const end = points * 8;
+  // The bound spares the checks of each access.
+  const end = Math.min(points * 8, out.length, a.length, b.length);
   for (let k = 0; k < end; k += 8) {
     const a12r = a[k + 2]!;
     const a12i = a[k + 3]!;
