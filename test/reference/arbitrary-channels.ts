@@ -1,5 +1,18 @@
 import { uniformReference, type Network } from '@tollgate/network';
 import fc from 'fast-check';
+import {
+  capacitor,
+  decades,
+  element,
+  lineFields,
+  oneLegKinds,
+  pairKinds,
+  real,
+  spiceKinds,
+  spicePairKinds,
+  type Arbitrary,
+  type Element,
+} from './arbitrary-elements';
 import { arbitraryS } from '../../libs/network/src/testing/samples';
 
 /** Random channels as a person might write them, and the measured parts they name. */
@@ -9,100 +22,6 @@ export interface RandomChannel {
 }
 
 export const pointsEach = 5;
-type Element = Record<string, unknown> & { kind: string };
-type Arbitrary<T> = fc.Arbitrary<T>;
-
-/** Even over the range: fast-check's own doubles are even over their exponents, and most would be next to nothing. */
-const real = (min: number, max: number): Arbitrary<number> =>
-  fc.integer({ min: 0, max: 1_000_000 }).map((k) => min + ((max - min) * k) / 1_000_000);
-/** Even over the decades from `min` to `max`. */
-const decades = (min: number, max: number): Arbitrary<number> =>
-  real(Math.log10(min), Math.log10(max)).map((exponent) => 10 ** exponent);
-const maybe = (value: Arbitrary<number>): Arbitrary<number | undefined> =>
-  fc.option(value, { nil: undefined });
-const element = (kind: string, fields: Record<string, Arbitrary<unknown>>): Arbitrary<Element> =>
-  fc.record(fields).map((rest) => ({ kind, ...rest }));
-
-const lineFields = {
-  z0Ohm: real(25, 120),
-  lengthM: decades(3e-4, 0.08),
-  effectivePermittivity: real(1, 6),
-  lossSqrtDbPerM: fc.oneof(fc.constant(0), real(0, 12)),
-  lossLinearDbPerM: fc.oneof(fc.constant(0), real(0, 8)),
-};
-
-/** Parts in series with each other; at least one is there. */
-const branch = (ohm: [number, number], henry: [number, number], farad: [number, number]) =>
-  fc
-    .record({
-      resistanceOhm: maybe(decades(...ohm)),
-      inductanceH: maybe(decades(...henry)),
-      capacitanceF: maybe(decades(...farad)),
-    })
-    .map((parts) =>
-      Object.values(parts).some((value) => value !== undefined) ? parts : { resistanceOhm: ohm[1] },
-    );
-
-const inPath = branch([0.1, 30], [1e-11, 2e-9], [1e-12, 1e-7]);
-const toGround = branch([20, 5000], [1e-9, 1e-7], [1e-14, 1e-12]);
-const pairLoss = fc.record({ sqrtDbPerM: real(0, 12), linearDbPerM: real(0, 8) });
-
-const oneLegKinds: Arbitrary<Element>[] = [
-  element('line', lineFields),
-  element('line', lineFields),
-  element('rlgc-line', {
-    resistanceOhmPerM: fc.oneof(fc.constant(0), decades(0.1, 100)),
-    inductanceHPerM: real(1.5e-7, 6e-7),
-    conductanceSPerM: fc.oneof(fc.constant(0), decades(1e-6, 1e-2)),
-    capacitanceFPerM: real(5e-11, 2e-10),
-    lengthM: decades(1e-4, 0.1),
-  }),
-  inPath.map((parts) => ({ kind: 'series', ...parts })),
-  toGround.map((parts) => ({ kind: 'shunt', ...parts })),
-  element('stub', { ...lineFields, lengthM: decades(3e-4, 0.03), end: fc.constantFrom('open', 'short') }),
-  element('stub', { ...lineFields, lengthM: decades(3e-4, 0.03), end: fc.constant('load'), load: toGround }),
-  element('tee', { near: inPath, shunt: toGround, far: inPath }),
-  element('pi', { near: toGround, series: inPath, far: toGround }),
-  element('transformer', { turnsRatio: real(0.5, 2) }),
-  element('attenuator', { attenuationDb: real(0, 6), z0Ohm: real(30, 90) }),
-  element('budget-loss', {
-    lossDb: real(0, 3),
-    atHz: decades(1e9, 2e10),
-    shape: fc.constantFrom('sqrt', 'linear'),
-    returnLossDb: maybe(real(10, 40)),
-    delayS: maybe(decades(1e-12, 1e-9)),
-  }),
-];
-
-const capacitor = element('capacitor', {
-  capacitanceF: decades(1e-9, 1e-6),
-  seriesInductanceH: decades(1e-10, 1e-9),
-  seriesResistanceOhm: real(0, 0.5),
-  padCapacitanceF: fc.oneof(fc.constant(0), decades(1e-14, 3e-13)),
-});
-
-const pairKinds: Arbitrary<Element>[] = [
-  element('coupled-line', {
-    evenZ0Ohm: real(45, 90),
-    oddZ0Ohm: real(25, 60),
-    evenEffectivePermittivity: real(1, 6),
-    oddEffectivePermittivity: real(1, 6),
-    lengthM: decades(3e-4, 0.08),
-    evenLoss: pairLoss,
-    oddLoss: pairLoss,
-  }),
-  element('line-pair', { p: fc.record(lineFields), n: fc.record(lineFields) }),
-  fc.tuple(decades(1e-11, 3e-9), real(0, 0.9)).map(([inductanceH, coupling]) => {
-    return { kind: 'pair-series', inductanceH, mutualInductanceH: inductanceH * coupling };
-  }),
-  element('pair-shunt', {
-    capacitanceF: decades(1e-14, 5e-13),
-    mutualCapacitanceF: decades(1e-15, 2e-13),
-    resistanceOhm: maybe(decades(100, 1e5)),
-    mutualResistanceOhm: maybe(decades(100, 1e5)),
-  }),
-];
-
 const circuitOf = (kinds: Arbitrary<Element>[]): Arbitrary<Element> =>
   fc
     .array(fc.oneof(...kinds), { minLength: 1, maxLength: 4 })
@@ -228,12 +147,12 @@ function channelOf(
   signaling: 'single-ended' | 'differential',
   kinds: Arbitrary<Element>[],
   references: Arbitrary<unknown>,
-  part: Arbitrary<Measured>,
+  part?: Arbitrary<Measured>,
 ): Arbitrary<RandomChannel> {
   const one = fc.oneof(
     { weight: 20, arbitrary: fc.oneof(...kinds, capacitor) },
-    { weight: 1, arbitrary: circuitOf(kinds) },
-    { weight: 1, arbitrary: part },
+    { weight: part ? 1 : 0, arbitrary: circuitOf(kinds) },
+    { weight: part ? 1 : 0, arbitrary: part ?? fc.oneof(...kinds) },
   );
   const row = fc.array(one, { minLength: 3, maxLength: 30, size: 'max' });
   const others = fc.uniqueArray(decades(1e6, 4e10), { minLength: pointsEach, maxLength: pointsEach });
@@ -268,4 +187,16 @@ export const veryLossyChannel = channelOf(
   [lossyLine, lossyLine, ...oneLegKinds],
   singleReference,
   measured(2),
+);
+
+/** A grid that ngspice can run, and channels on it. */
+export const spiceGrid = { from: 1e7, to: 2.001e10, points: pointsEach };
+const onSpiceGrid = (channel: fc.Arbitrary<RandomChannel>): fc.Arbitrary<RandomChannel> =>
+  channel.map(({ document, parts }) => {
+    const { from: startHz, to: stopHz, points } = spiceGrid;
+    return { document: { ...document, grid: { startHz, stopHz, points } }, parts };
+  });
+export const circuitOfSingleEnded = onSpiceGrid(channelOf('single-ended', spiceKinds, singleReference));
+export const circuitOfDifferential = onSpiceGrid(
+  channelOf('differential', [...spiceKinds, ...spicePairKinds, ...spicePairKinds], pairReference),
 );

@@ -56,7 +56,9 @@ export class Equations {
       }
       if (size(rows[best]!, column) === 0) throw new Error('The equations have no single solution.');
       [rows[column], rows[best]] = [rows[best]!, rows[column]!];
-      for (let row = column + 1; row < unknowns; row++) eliminate(rows[row]!, rows[column]!, column);
+      const pivot = rows[column]!;
+      const filled = filledOf(pivot, column);
+      for (let row = column + 1; row < unknowns; row++) eliminate(rows[row]!, pivot, column, filled);
     }
     return this.substituted();
   }
@@ -93,13 +95,19 @@ function scaled(row: Float64Array, unknowns: number): Float64Array {
   return largest > 0 ? row.map((value) => value / largest) : row;
 }
 
-function eliminate(row: Float64Array, pivot: Float64Array, column: number): void {
+/** Where a row is not 0 from `column` on; most of it is, as an element knows its own two joints only. */
+function filledOf(row: Float64Array, column: number): number[] {
+  const filled: number[] = [];
+  for (let k = column * 2; k < row.length; k += 2) if (row[k] !== 0 || row[k + 1] !== 0) filled.push(k);
+  return filled;
+}
+
+function eliminate(row: Float64Array, pivot: Float64Array, column: number, filled: readonly number[]): void {
   const at = column * 2;
   if (row[at] === 0 && row[at + 1] === 0) return;
   const [re, im] = divide([row[at]!, row[at + 1]!], [pivot[at]!, pivot[at + 1]!]);
-  for (let k = at; k < row.length; k += 2) {
+  for (const k of filled) {
     const [x, y] = [pivot[k]!, pivot[k + 1]!];
-    if (x === 0 && y === 0) continue;
     row[k]! -= re * x - im * y;
     row[k + 1]! -= re * y + im * x;
   }
