@@ -15,8 +15,6 @@ export interface Mesh {
   readonly on: Uint8Array;
   readonly left: Uint8Array;
   readonly right: Uint8Array;
-  /** Mean of the square over the square of the mean of the charge, where the segment ends in a corner; else 1. */
-  readonly crest: Float64Array;
 }
 
 /** How closely pieces are cut. `copper` is the segments on half a face, `open` those on a face that runs outward. */
@@ -27,11 +25,22 @@ export interface Fineness {
 }
 
 /** Segment sizes grow from a corner with this power of their count: charge there goes as distance to the power -1/3. */
-const crowdingPower = 2.6;
+const crowdingPower = 3.5;
+/** A long face that something near faces is cut finer, up to this many times. */
+const mostFiner = 3;
 
 export function meshOf(pieces: readonly Piece[], fineness: Fineness): Mesh {
   const order = [...pieces].sort((a, b) => rank(a) - rank(b));
-  const cuts = order.map((piece) => cutsOf(piece, order, fineness));
+  return meshWith(order, cutsFor(order, fineness));
+}
+
+/** Where each piece is cut, as shares of its length, 0 and 1 included. */
+export function cutsFor(pieces: readonly Piece[], fineness: Fineness): Float64Array[] {
+  return pieces.map((piece) => cutsOf(piece, pieces, fineness));
+}
+
+/** The mesh of pieces, copper first, cut as said. */
+export function meshWith(order: readonly Piece[], cuts: readonly Float64Array[]): Mesh {
   const count = cuts.reduce((sum, cut) => sum + cut.length - 1, 0);
   const mesh = blank(count);
   let k = 0;
@@ -54,7 +63,7 @@ function blank(count: number): Omit<Mesh, 'count' | 'traceCount' | 'copperCount'
   const bytes = () => new Uint8Array(count);
   return {
     ...{ midX: floats(), midY: floats(), half: floats(), alongX: floats(), alongY: floats() },
-    ...{ on: bytes(), left: bytes(), right: bytes(), crest: floats().fill(1) },
+    ...{ on: bytes(), left: bytes(), right: bytes() },
   };
 }
 
@@ -79,36 +88,30 @@ function fill(
     mesh.left[k] = piece.left;
     mesh.right[k] = piece.right;
   }
-  if (piece.corners[0] > 0) mesh.crest[from] = crestOf(piece.corners[0]);
-  if (piece.corners[1] > 0) mesh.crest[k - 1] = crestOf(piece.corners[1]);
   return k;
 }
 
-/**
- * Charge at a corner with the angle `outside` (over pi) outside the copper goes as distance to the power p = 1/outside - 1
- * (J. Van Bladel, Singular Electromagnetic Fields and Sources, 1991): mean square over squared mean is (1 + p)^2/(1 + 2p).
- */
-function crestOf(outside: number): number {
-  const p = 1 / outside - 1;
-  return (1 + p) ** 2 / (1 + 2 * p);
-}
-
-/** Where a piece is cut, as shares of its length, 0 and 1 included. */
 function cutsOf(piece: Piece, all: readonly Piece[], { copper, between, open }: Fineness): Float64Array {
   const length = lengthOf(piece);
+  const both = piece.crowding === 'both';
+  const finer = (length / (both ? 2 : 1) / piece.nearM / 2) ** (1 / crowdingPower);
+  const times = (count: number) => Math.round(count * Math.min(Math.max(finer, 1), mostFiner));
+  const along = times(piece.surface <= surface.side ? copper : between);
   switch (piece.crowding) {
     case 'both': {
       const side = piece.surface === surface.side || piece.surface === surface.between;
-      return bothEnds(side ? Math.max(3, Math.round(copper * 0.6)) : copper);
+      return bothEnds(side ? Math.max(3, times(copper * 0.6)) : times(copper));
     }
     case 'start':
-      return towardsStart(piece.surface <= surface.side ? copper : between);
+      return towardsStart(along);
     case 'end':
-      return turned(towardsStart(piece.surface <= surface.side ? copper : between));
+      return turned(towardsStart(along));
     case 'inward':
     case 'outward': {
       const first = piece.firstM ?? finest(all, copper);
-      const cuts = outward(open, Math.min(first / length, 0.5 / open));
+      // A plane above ends sooner than a face in the open.
+      const count = Math.round(piece.surface === surface.planeAbove ? open * 0.7 : open);
+      const cuts = outward(count, Math.min(first / length, 0.5 / count));
       return piece.crowding === 'outward' ? cuts : turned(cuts);
     }
   }

@@ -1,16 +1,20 @@
-import { vacuumImpedance } from '../constants';
-import type { WallShares } from '../conductor';
 import type { Kernel } from './kernel';
 import { factorize, solve, solveTransposed } from './linear-system';
 import type { Mesh } from './mesh';
-import { surface } from './outline';
 
 /** The symmetry of a mode about the middle: 1 mirrors charges, -1 mirrors and turns their sign. */
 export type Symmetry = 1 | -1;
 
 /** Charge over eps0 on every segment of copper in air, the trace at 1 V. */
 export function airCharges(mesh: Mesh, kernel: Kernel, symmetry: Symmetry): Float64Array {
-  const { count, copperCount } = mesh;
+  return solve(
+    factorize(airMatrix(mesh, kernel, symmetry), mesh.copperCount),
+    voltages(mesh, mesh.copperCount),
+  );
+}
+
+/** What unit charges on copper do to its potential in air. */
+export function airMatrix({ count, copperCount }: Mesh, kernel: Kernel, symmetry: Symmetry): Float64Array {
   const a = new Float64Array(copperCount * copperCount);
   for (let row = 0; row < copperCount; row++) {
     for (let column = 0; column < copperCount; column++) {
@@ -18,10 +22,11 @@ export function airCharges(mesh: Mesh, kernel: Kernel, symmetry: Symmetry): Floa
       a[row * copperCount + column] = kernel.own[at]! + symmetry * kernel.mirrored[at]!;
     }
   }
-  return solve(factorize(a, copperCount), voltages(mesh, copperCount));
+  return a;
 }
 
-function voltages({ traceCount }: Mesh, count: number): Float64Array {
+/** The trace at 1 V, all else at 0. */
+export function voltages({ traceCount }: Mesh, count: number): Float64Array {
   return new Float64Array(count).fill(1, 0, traceCount);
 }
 
@@ -80,56 +85,4 @@ export function freeCharge(
     slopes[right[row]!]! -= adjoint[row]! * (density[row]! / 2 - field);
   }
   return { charge, slopes };
-}
-
-/**
- * How the impedance in air grows as each wall recedes: eta0 times the integral of (sigma/Q)^2 over the wall (formula B8; the tangential
- * magnetic field goes as the charge in air). A single trace has two halves.
- */
-export function sharesOf(mesh: Mesh, charges: Float64Array, symmetry: Symmetry, alone: boolean): WallShares {
-  const charge = chargeOf(mesh, charges);
-  const scale = (vacuumImpedance * (alone ? 0.5 : 1)) / (charge * charge);
-  const sums = [0, 0, 0, 0, 0];
-  for (let k = 0; k < mesh.copperCount; k++) {
-    sums[mesh.on[k]!]! += 2 * mesh.half[k]! * charges[k]! * charges[k]! * mesh.crest[k]!;
-  }
-  return {
-    lower: scale * sums[surface.lower]!,
-    upper: scale * sums[surface.upper]!,
-    sides: scale * sums[surface.side]!,
-    planeBelow: scale * squareBelow(mesh, charges, symmetry),
-    planeAbove: scale * sums[surface.planeAbove]!,
-  };
-}
-
-/** Integral of the squared charge density (over eps0) on the right half of the plane at height 0. */
-function squareBelow(mesh: Mesh, charges: Float64Array, symmetry: Symmetry): number {
-  let scaleM = Infinity;
-  let edgeM = 0;
-  for (let k = 0; k < mesh.traceCount; k++) {
-    scaleM = Math.min(scaleM, mesh.midY[k]!);
-    edgeM = Math.max(edgeM, mesh.midX[k]!);
-  }
-  // Level steps below the trace, then steps that grow; the field has no feature narrower than its height.
-  const step = Math.max(scaleM / 5, edgeM / 80);
-  const end = edgeM + 60 * scaleM;
-  let sum = 0;
-  for (let x = 0, width = step; x < end; x += width) {
-    if (x > edgeM + 2 * scaleM) width *= 1.1;
-    const density = densityBelow(mesh, charges, symmetry, x + width / 2);
-    sum += density * density * width;
-  }
-  return sum;
-}
-
-/** Charge on the plane below (over eps0) at x, of segments taken as points seen from their height. */
-function densityBelow(mesh: Mesh, charges: Float64Array, symmetry: Symmetry, x: number): number {
-  let density = 0;
-  for (let k = 0; k < mesh.copperCount; k++) {
-    const y = mesh.midY[k]!;
-    const [a, b] = [x - mesh.midX[k]!, x + mesh.midX[k]!];
-    const seen = 1 / (a * a + y * y) + symmetry / (b * b + y * y);
-    density -= (2 * mesh.half[k]! * charges[k]! * y * seen) / Math.PI;
-  }
-  return density;
 }

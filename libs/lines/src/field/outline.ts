@@ -19,16 +19,16 @@ export interface Piece {
   /** Copper: outside. Between: on the left. */
   readonly left: number;
   readonly right: number;
-  /** Outer angle over pi at each end where the copper has a corner; 0 where it has none. */
-  readonly corners: readonly [number, number];
+  /** What its segments must resolve: the nearest thing that faces it. */
+  readonly nearM: number;
   /** Growing outward: the first segment where the copper's own corners don't set it. */
   readonly firstM?: number;
 }
 
 /** Half width reached by open interfaces, in heights of what they belong to: beyond, what is left weighs under 1e-5. */
-const openReach = 40;
+const openReach = 20;
 /** The same under a plane, where fields die out by exp(-pi x/height). */
-const coveredReach = 5;
+const coveredReach = 4;
 
 export function airOf({ section }: Shape): number {
   return section.sheets.length + (section.mask ? 1 : 0);
@@ -38,12 +38,7 @@ export function airOf({ section }: Shape): number {
 export function outlineOf(shape: Shape): Piece[] {
   const { section, heightM } = shape;
   const pieces = copperOf(shape);
-  const edgeM = shape.centreM + Math.max(shape.lowerWidthM, shape.upperWidthM) / 2;
-  const scaleM = Math.max(
-    heightM,
-    section.traceAtM + section.trace.thicknessM + (section.mask?.thicknessM ?? 0),
-  );
-  const endM = edgeM + (section.planeAbove ? coveredReach : openReach) * scaleM;
+  const endM = endOf(shape);
   for (let i = 0; i + 1 < section.sheets.length; i++)
     pieces.push(...faceAt(shape, shape.topsM[i]!, i, i + 1, endM));
   if (section.planeAbove) {
@@ -57,51 +52,62 @@ export function outlineOf(shape: Shape): Piece[] {
   return pieces;
 }
 
+/** Where the faces that run outward end. */
+function endOf({ section, centreM, heightM, lowerWidthM, upperWidthM }: Shape): number {
+  const edgeM = centreM + Math.max(lowerWidthM, upperWidthM) / 2;
+  const upperM = section.traceAtM + section.trace.thicknessM + (section.mask?.thicknessM ?? 0);
+  return edgeM + (section.planeAbove ? coveredReach : openReach) * Math.max(heightM, upperM);
+}
+
 function sheetAt({ section, topsM }: Shape, yM: number): number {
   const index = topsM.findIndex((top) => yM < top - sameHeightM);
   return index >= 0 ? index : section.sheets.length;
 }
 
+/** What conducts, whatever the dielectrics: the trace, and the plane above where there is one. */
+export function conductorsOf(shape: Shape): Piece[] {
+  const bare = { ...shape, topsM: [], section: { ...shape.section, mask: undefined } };
+  const pieces = copperOf(bare);
+  return shape.section.planeAbove ? [...pieces, ...planeAbove(bare, endOf(bare))] : pieces;
+}
+
 /** Lower face, upper face and side walls of the right-hand trace; only its right half where it is alone. */
 function copperOf(shape: Shape): Piece[] {
-  const { section, centreM, lowerWidthM, upperWidthM } = shape;
-  const { traceAtM: lowM } = section;
-  const highM = lowM + section.trace.thicknessM;
+  const { section, centreM, heightM, lowerWidthM, upperWidthM } = shape;
+  const { traceAtM: lowM, gapM = Infinity, mask, planeAbove: covered } = section;
+  const { thicknessM } = section.trace;
+  const highM = lowM + thicknessM;
   const pair = section.gapM !== undefined;
-  const slope = (lowerWidthM - upperWidthM) / 2 / section.trace.thicknessM;
-  // Angle of the space outside over pi at the lower and the upper corner.
-  const inside = Math.atan2(1, slope) / Math.PI;
-  const [lowerCorner, upperCorner] = [2 - inside, 1 + inside];
-  const face = (on: Surface, yM: number, widthM: number, corner: number, material: number): Piece => ({
+  const face = (on: Surface, yM: number, widthM: number, material: number, overM: number): Piece => ({
     surface: on,
     from: [pair ? centreM - widthM / 2 : 0, yM],
     to: [centreM + widthM / 2, yM],
     crowding: pair ? 'both' : 'end',
     left: material,
     right: material,
-    corners: [pair ? corner : 0, corner],
+    nearM: Math.min(overM, gapM, 3 * thicknessM),
   });
   const under = sheetAt(shape, lowM - 2 * sameHeightM);
-  const over = section.mask ? section.sheets.length : sheetAt(shape, highM);
+  const over = mask ? section.sheets.length : sheetAt(shape, highM);
+  const openM = covered ? heightM - highM : (mask?.thicknessM ?? Infinity);
   const pieces = [
-    face(surface.lower, lowM, lowerWidthM, lowerCorner, under),
-    face(surface.upper, highM, upperWidthM, upperCorner, over),
-    ...wall(shape, 1, [lowerCorner, upperCorner]),
+    face(surface.lower, lowM, lowerWidthM, under, lowM),
+    face(surface.upper, highM, upperWidthM, over, openM),
+    ...wall(shape, 1),
   ];
-  return pair ? [...pieces, ...wall(shape, -1, [lowerCorner, upperCorner])] : pieces;
+  return pair ? [...pieces, ...wall(shape, -1)] : pieces;
 }
 
 /** A side wall from foot to top, cut where it passes from sheet to sheet. */
-function wall(shape: Shape, side: 1 | -1, corners: readonly [number, number]): Piece[] {
+function wall(shape: Shape, side: 1 | -1): Piece[] {
   const { section, topsM, centreM } = shape;
-  const lowM = section.traceAtM;
+  const { traceAtM: lowM, gapM = Infinity, mask } = section;
   const highM = lowM + section.trace.thicknessM;
   const cuts = topsM.filter((top) => top > lowM + sameHeightM && top < highM - sameHeightM);
   const heights = [lowM, ...cuts, highM];
   return heights.slice(1).map((toM, k): Piece => {
     const fromM = heights[k]!;
-    const material = section.mask ? section.sheets.length : sheetAt(shape, (fromM + toM) / 2);
-    const [first, last] = [k === 0, k === heights.length - 2];
+    const material = mask ? section.sheets.length : sheetAt(shape, (fromM + toM) / 2);
     return {
       surface: surface.side,
       from: [centreM + side * halfWidthAt(shape, fromM), fromM],
@@ -109,12 +115,13 @@ function wall(shape: Shape, side: 1 | -1, corners: readonly [number, number]): P
       crowding: 'both',
       left: material,
       right: material,
-      corners: [first ? corners[0] : 0, last ? corners[1] : 0],
+      nearM: Math.min(gapM, mask?.thicknessM ?? Infinity),
     };
   });
 }
 
-function halfWidthAt({ section, lowerWidthM, upperWidthM }: Shape, yM: number): number {
+/** Half the trace's width at a height. */
+export function halfWidthAt({ section, lowerWidthM, upperWidthM }: Shape, yM: number): number {
   const share = (yM - section.traceAtM) / section.trace.thicknessM;
   return (lowerWidthM + share * (upperWidthM - lowerWidthM)) / 2;
 }
@@ -124,21 +131,27 @@ function faceAt(shape: Shape, yM: number, below: number, above: number, endM: nu
   const { section, centreM } = shape;
   const lowM = section.traceAtM;
   const highM = lowM + section.trace.thicknessM;
-  const common = { surface: surface.between, left: above, right: below, corners: [0, 0] as const };
+  const common = { surface: surface.between, left: above, right: below };
   const through = yM > lowM - sameHeightM && yM < highM + sameHeightM;
   if (!through) return pastCopper(shape, common, yM, endM);
   const halfM = halfWidthAt(shape, Math.min(Math.max(yM, lowM), highM));
-  const outer: Piece = { ...common, from: [centreM + halfM, yM], to: [endM, yM], crowding: 'outward' };
+  const outer: Piece = {
+    ...common,
+    from: [centreM + halfM, yM],
+    to: [endM, yM],
+    crowding: 'outward',
+    nearM: Infinity,
+  };
   return section.gapM === undefined ? [outer] : [innerFace(common, yM, centreM - halfM, lowM), outer];
 }
 
 /** Between the legs of a pair: where they stand far apart it grows inward from the copper as the outer face does. */
 function innerFace(common: Common, yM: number, toM: number, heightM: number): Piece {
   const crowding = toM > 2 * heightM ? 'inward' : 'end';
-  return { ...common, from: [0, yM], to: [toM, yM], crowding };
+  return { ...common, from: [0, yM], to: [toM, yM], crowding, nearM: Infinity };
 }
 
-type Common = Pick<Piece, 'surface' | 'left' | 'right' | 'corners'>;
+type Common = Pick<Piece, 'surface' | 'left' | 'right'>;
 
 /** A level face that passes the copper at a distance: crowded over and under its edges, then outward. */
 function pastCopper(shape: Shape, common: Common, yM: number, endM: number): Piece[] {
@@ -162,6 +175,7 @@ function pastCopper(shape: Shape, common: Common, yM: number, endM: number): Pie
     from: [from, yM],
     to: [to, yM],
     crowding,
+    nearM: Math.min(apartM, section.gapM ?? Infinity),
     firstM: apartM / 3,
   }));
 }
@@ -169,7 +183,7 @@ function pastCopper(shape: Shape, common: Common, yM: number, endM: number): Pie
 function planeAbove(shape: Shape, endM: number): Piece[] {
   const yM = shape.heightM;
   const material = shape.section.sheets.length - 1;
-  const common = { surface: surface.planeAbove, left: material, right: material, corners: [0, 0] as const };
+  const common = { surface: surface.planeAbove, left: material, right: material };
   return pastCopper(shape, common, yM, endM);
 }
 
@@ -201,7 +215,8 @@ function maskSurface(shape: Shape, endM: number): Piece[] {
     crowding: k === points.length - 2 ? 'outward' : k === 0 ? 'end' : 'both',
     left: air,
     right: mask,
-    corners: [0, 0],
+    nearM: tM,
+    firstM: tM / 6,
   }));
 }
 

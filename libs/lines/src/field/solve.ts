@@ -3,8 +3,9 @@ import type { WallShares } from '../conductor';
 import type { ModeName } from '../models';
 import { kernelOf, type Kernel } from './kernel';
 import { meshOf, type Fineness, type Mesh } from './mesh';
-import { airCharges, chargeOf, freeCharge, sharesOf, type Symmetry } from './moments';
+import { airCharges, chargeOf, freeCharge, type Symmetry } from './moments';
 import { outlineOf } from './outline';
+import { wallSharesOf } from './recession';
 import { shapeOf, type FieldSection, type Shape } from './section';
 
 export interface FieldMode {
@@ -20,6 +21,9 @@ export interface FieldMode {
   readonly shares: WallShares;
 }
 
+/** What one mesh tells of a mode; the walls' shares are found apart. */
+type FieldCharges = Omit<FieldMode, 'shares'>;
+
 export interface FieldSolution {
   readonly modes: Partial<Record<ModeName, FieldMode>>;
   /** Relative, from two meshes: the difference between them, which the extrapolated value stays well inside. */
@@ -28,12 +32,12 @@ export interface FieldSolution {
   readonly unknowns: number;
 }
 
-const coarse: Fineness = { copper: 8, between: 6, open: 14 };
-const fine: Fineness = { copper: 12, between: 9, open: 21 };
+const coarse: Fineness = { copper: 8, between: 6, open: 20 };
+const fine: Fineness = { copper: 12, between: 9, open: 30 };
 /** Halving the segments takes the error down by about this power of two. */
 const order = 2;
-/** What the cut faces leave open beside the meshes' difference. */
-const leastError = 1e-4;
+/** What cut faces and corners leave open where the meshes happen to agree. */
+const leastError = { z0: 2e-4, permittivity: 3e-4 };
 
 /**
  * Impedance, effective permittivity, fillings and wall shares of a cross-section by the method of moments: charges on copper and
@@ -47,20 +51,23 @@ export function solveSection(section: FieldSection): FieldSolution {
   const [rough, good] = [coarse, fine].map((fineness) => solveOn(shape, names, fineness));
   const modes: Partial<Record<ModeName, FieldMode>> = {};
   let [z0, permittivity] = [0, 0];
+  const shares = wallSharesOf(shape, names.map(symmetryOf), coarse);
   const ratio = fine.copper / coarse.copper;
   const reach = 1 / (ratio ** order - 1);
   names.forEach((name, i) => {
     const [a, b] = [rough!.modes[i]!, good!.modes[i]!];
-    const extrapolated = (pick: (mode: FieldMode) => number) => pick(b) + reach * (pick(b) - pick(a));
+    const extrapolated = (pick: (mode: FieldCharges) => number) => pick(b) + reach * (pick(b) - pick(a));
     modes[name] = {
       z0Ohm: extrapolated((mode) => mode.z0Ohm),
       effectivePermittivity: extrapolated((mode) => mode.effectivePermittivity),
       airOhm: extrapolated((mode) => mode.airOhm),
       filling: b.filling.map((_, k) => extrapolated((mode) => mode.filling[k]!)),
-      shares: b.shares,
+      shares: shares[i]!,
     };
-    z0 = Math.max(z0, leastError + Math.abs(a.z0Ohm / b.z0Ohm - 1));
-    permittivity = Math.max(permittivity, Math.abs(a.effectivePermittivity / b.effectivePermittivity - 1));
+    z0 = Math.max(z0, leastError.z0 + Math.abs(a.z0Ohm / b.z0Ohm - 1));
+    const off = Math.abs(a.effectivePermittivity / b.effectivePermittivity - 1);
+    // One dielectric throughout is itself the answer.
+    permittivity = Math.max(permittivity, off === 0 ? 0 : leastError.permittivity + off);
   });
   return { modes, error: { z0, permittivity }, unknowns: good!.unknowns };
 }
@@ -69,14 +76,18 @@ function solveOn(
   shape: Shape,
   names: readonly ModeName[],
   fineness: Fineness,
-): { modes: FieldMode[]; unknowns: number } {
+): { modes: FieldCharges[]; unknowns: number } {
   const mesh = meshOf(outlineOf(shape), fineness);
   const kernel = kernelOf(mesh);
   return { modes: names.map((name) => modeOn(shape, mesh, kernel, name)), unknowns: mesh.count };
 }
 
-function modeOn({ section }: Shape, mesh: Mesh, kernel: Kernel, name: ModeName): FieldMode {
-  const symmetry: Symmetry = name === 'odd' ? -1 : 1;
+function symmetryOf(name: ModeName): Symmetry {
+  return name === 'odd' ? -1 : 1;
+}
+
+function modeOn({ section }: Shape, mesh: Mesh, kernel: Kernel, name: ModeName): FieldCharges {
+  const symmetry = symmetryOf(name);
   const alone = name === 'single';
   const charges = airCharges(mesh, kernel, symmetry);
   const airCharge = chargeOf(mesh, charges);
@@ -87,7 +98,6 @@ function modeOn({ section }: Shape, mesh: Mesh, kernel: Kernel, name: ModeName):
   const filled = homogeneous ? undefined : freeCharge(mesh, kernel, symmetry, [...given, 1]);
   const effectivePermittivity = filled ? filled.charge / airCharge : given[0]!;
   const filling = given.map((_, k) => (filled ? filled.slopes[k]! / airCharge : 1));
-  const shares = sharesOf(mesh, charges, symmetry, alone);
   const z0Ohm = airOhm / Math.sqrt(effectivePermittivity);
-  return { z0Ohm, effectivePermittivity, airOhm, filling, shares };
+  return { z0Ohm, effectivePermittivity, airOhm, filling };
 }
