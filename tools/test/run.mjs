@@ -14,8 +14,12 @@ const work = mkdtempSync(join(tmpdir(), 'tg-test-'));
 const totals = { passed: 0, failed: 0 };
 const failures = [];
 const skipped = [];
-/** Measured files and a live reference that some tests need; without it they are named as skipped. */
-const scikitRf = '/usr/lib/python3/dist-packages/skrf';
+/** References and measured files of Debian that some tests call (test/support/needs.ts); without them those are named as skipped. */
+const references = {
+  'python3-scikit-rf': '/usr/lib/python3/dist-packages/skrf',
+  ngspice: '/usr/bin/ngspice',
+  atlc: '/usr/bin/atlc',
+};
 
 function run(command, args, env = {}) {
   return new Promise((done) => {
@@ -85,11 +89,12 @@ async function jest(name, config, args, env) {
     failures.push(`${name} ended with ${code}\n${text.slice(-3000)}`);
 }
 
-/** Brings scikit-rf where we may; its absence is an error only where everything is required, as .ci/run does. */
-function ensureScikitRf() {
-  if (existsSync(scikitRf)) return;
+/** Brings the references where we may; their absence is an error only where everything is required, as .ci/run does. */
+function ensureReferences() {
+  const missing = Object.keys(references).filter((name) => !existsSync(references[name]));
+  if (missing.length === 0) return;
   try {
-    installPackages(['python3-scikit-rf'], 'scikit-rf');
+    installPackages(missing, `What tests compare with (${missing.join(', ')})`);
   } catch (error) {
     if (process.env.TOLLGATE_REQUIRE_ALL === '1') throw error;
     console.log(`${error.message}\nWithout it the tests that need it are skipped.`);
@@ -107,7 +112,7 @@ async function main() {
       missing.map((name) => programs[name]),
       `What the tests call (${missing.join(', ')})`,
     );
-  ensureScikitRf();
+  ensureReferences();
 
   const database = await startDatabase(join(work, 'mariadb'));
   try {

@@ -1,5 +1,5 @@
-import { existsSync, readFileSync } from 'node:fs';
-import { join, resolve } from 'node:path';
+import { readFileSync } from 'node:fs';
+import { describeWith, referenceData } from '../../../test/support/needs';
 import type { Dielectric, LineMode, SolvedLine, TraceLine } from './index';
 import { LineError, solveLine } from './index';
 
@@ -152,12 +152,6 @@ describe('what no listed form covers is refused', () => {
   });
 });
 
-/** Seven cross-sections of a finite-element solution, where the reference folder is present. */
-const folder =
-  process.env['TOLLGATE_REFERENCE'] ?? join(resolve(__dirname, '../../..'), '../shared/reference');
-const path = join(folder, 'traces.json');
-const whenPresent = existsSync(path) ? describe : describe.skip;
-
 interface SolvedCase {
   id: string;
   geometry: { w_m: number; t_m: number; h_m: number; h2_m?: number; s_m?: number; er: number };
@@ -172,10 +166,11 @@ interface SolvedCase {
   >;
 }
 
-whenPresent('cross-sections of a finite-element solution', () => {
-  const cases = existsSync(path)
-    ? (JSON.parse(readFileSync(path, 'utf8')) as { cases: SolvedCase[] }).cases
-    : [];
+/** Seven cross-sections of a finite-element solution, where the reference folder is present. */
+const solvedSections = referenceData('traces.json');
+
+describeWith(solvedSections, 'cross-sections of a finite-element solution', () => {
+  const { cases } = JSON.parse(readFileSync(solvedSections.path, 'utf8')) as { cases: SolvedCase[] };
   const solve = (id: string): { solved: SolvedLine; wanted: SolvedCase } => {
     const wanted = cases.find((one) => one.id === id)!;
     const g = wanted.geometry;

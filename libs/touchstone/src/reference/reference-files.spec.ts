@@ -1,13 +1,19 @@
-import { existsSync, readdirSync, readFileSync } from 'node:fs';
-import { join, resolve } from 'node:path';
-import { assessQuality, largestSingularValue } from '@tollgate/network';
+import { createHash } from 'node:crypto';
+import { readdirSync, readFileSync } from 'node:fs';
+import { join } from 'node:path';
+import { assessQuality, largestSingularValue, type Network } from '@tollgate/network';
+import { describeWith, referenceData, scikitRf } from '../../../../test/support/needs';
 import { readTouchstone, TouchstoneError } from '../index';
+import { packagedRows } from './packaged-rows';
 import { referenceRows } from './reference-rows';
 
-const root = resolve(__dirname, '../../../..');
-const folder = join(process.env['TOLLGATE_REFERENCE'] ?? join(root, '../shared/reference'), 'touchstone');
-const packaged = '/usr/lib/python3/dist-packages/skrf';
+const { path: folder } = referenceData('touchstone');
 const read = (path: string): ReturnType<typeof readTouchstone> => readTouchstone(path, readFileSync(path));
+
+function largestOf({ ports, frequenciesHz, s }: Network): number {
+  const at = [...frequenciesHz.keys()].map((k) => largestSingularValue(s, ports, k * ports * ports * 2));
+  return at.reduce((largest, value) => Math.max(largest, value), 0);
+}
 
 function largestAsymmetry(ports: number, s: Float64Array): number {
   let largest = 0;
@@ -23,11 +29,8 @@ function largestAsymmetry(ports: number, s: Float64Array): number {
   return largest;
 }
 
-/** Other programs' files, read where they are installed; without them the tests of our own files beside this one remain. */
-const whenFolder = existsSync(folder) ? describe : describe.skip;
-const whenPackaged = existsSync(packaged) ? describe : describe.skip;
-
-whenFolder('files of the reference folder', () => {
+/** Other programs' files, read where they are; without them the tests of our own files beside this one remain. */
+describeWith(referenceData('touchstone'), 'files of the reference folder', () => {
   it('all stand in the table', () => {
     const files = readdirSync(folder).filter((file) => !file.endsWith('.md'));
     expect(files.sort()).toEqual(referenceRows.map(([file]) => file).sort());
@@ -43,11 +46,7 @@ whenFolder('files of the reference folder', () => {
       expect(network.frequenciesHz).toHaveLength(points);
       expect(network.frequenciesHz[0]).toBeCloseTo(fromHz, 3);
       expect(Math.abs(network.frequenciesHz[points - 1]! - toHz)).toBeLessThanOrEqual(1e-5 * toHz);
-      let largest = 0;
-      for (let k = 0; k < points; k++) {
-        largest = Math.max(largest, largestSingularValue(network.s, ports, k * ports * ports * 2));
-      }
-      expect(Math.abs(largest - singular)).toBeLessThan(0.51e-4);
+      expect(Math.abs(largestOf(network) - singular)).toBeLessThan(0.51e-4);
       const found = largestAsymmetry(ports, network.s);
       expect(Math.abs(found - asymmetry)).toBeLessThan(Math.max(1e-12, 0.051 * asymmetry));
     },
@@ -68,21 +67,41 @@ whenFolder('files of the reference folder', () => {
   });
 });
 
-whenPackaged('files that Debian installs with python3-scikit-rf', () => {
-  const files = (readdirSync(packaged, { recursive: true }) as string[]).filter((file) =>
+/** By the first digits of the SHA-256: some files stand there twice. */
+function packagedFiles(): Map<string, string> {
+  const files = (readdirSync(scikitRf.path, { recursive: true }) as string[]).filter((file) =>
     /\.s\d+p$/i.test(file),
   );
-  it('are many', () => expect(files.length).toBeGreaterThan(50));
-  it.each(files)('%s is read whole, or refused with the line and the reason', (file) => {
-    try {
-      const { network } = read(join(packaged, file));
-      expect(network.s).toHaveLength(network.frequenciesHz.length * network.ports ** 2 * 2);
-      expect(network.s.every(Number.isFinite)).toBe(true);
-    } catch (error) {
-      expect(error).toBeInstanceOf(TouchstoneError);
-      expect((error as TouchstoneError).reason).not.toBe('');
-      expect((error as TouchstoneError).mend).not.toBe('');
-      expect(`${file}: ${(error as TouchstoneError).reason}`).toMatch(/stands twice|holds no network data/);
-    }
+  return new Map(
+    files.map((file) => {
+      const path = join(scikitRf.path, file);
+      return [createHash('sha256').update(readFileSync(path)).digest('hex').slice(0, 12), path];
+    }),
+  );
+}
+
+describeWith(scikitRf, 'files that Debian installs with python3-scikit-rf', () => {
+  it('all stand in the table', () => {
+    expect([...packagedFiles().keys()].sort()).toEqual(packagedRows.map(([sha256]) => sha256));
   });
+  it.each(packagedRows.filter((row) => row.length === 2))(
+    'refuses %s with the line and how to mend it',
+    (sha256, reason) => {
+      const attempt = () => read(packagedFiles().get(sha256)!);
+      expect(attempt).toThrow(TouchstoneError);
+      expect(attempt).toThrow(reason);
+      expect(attempt).toThrow(
+        expect.objectContaining({ line: expect.any(Number), mend: expect.stringMatching(/\w/) }),
+      );
+    },
+  );
+  it.each(packagedRows.filter((row) => row.length === 6))(
+    'reads %s: %i ports, %i points, %d to %d Hz',
+    (sha256, ports, points, fromHz, toHz, singular) => {
+      const { network } = read(packagedFiles().get(sha256)!);
+      expect([network.ports, network.frequenciesHz.length]).toEqual([ports, points]);
+      expect([network.frequenciesHz[0], network.frequenciesHz[points - 1]]).toEqual([fromHz, toHz]);
+      expect(Math.abs(largestOf(network) - singular)).toBeLessThan(0.51e-4);
+    },
+  );
 });
