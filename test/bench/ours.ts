@@ -1,6 +1,15 @@
 import { readFileSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
-import { cascadeAll, uniformReference, type CascadePorts, type Network } from '@tollgate/network';
+import { buildElement, type BuildContext } from '@tollgate/elements';
+import type { ChannelElement } from '@tollgate/contracts';
+import {
+  cascadeAll,
+  cascadeInto,
+  through,
+  uniformReference,
+  type CascadePorts,
+  type Network,
+} from '@tollgate/network';
 import { readTouchstone, writeTouchstone } from '@tollgate/touchstone';
 
 /**
@@ -34,6 +43,40 @@ function cascades(ports: CascadePorts, runs: number): void {
   measure(`cascade-${ports}-ports-20x2001`, () => cascadeAll(sections, ports, points, out), runs);
 }
 
+const trialPoints = 500;
+
+/** Twenty elements with values of their own: ten lines, five series R-L, five shunt C. */
+function randomElements(): ChannelElement[] {
+  return Array.from({ length: 20 }, (_unused, k): ChannelElement => {
+    if (k % 4 === 1) {
+      return { kind: 'series', resistanceOhm: uniform(), inductanceH: uniform() * 1e-10 };
+    }
+    if (k % 4 === 3) return { kind: 'shunt', capacitanceF: uniform() * 1e-13 };
+    return {
+      kind: 'line',
+      z0Ohm: 40 + 20 * uniform(),
+      lengthM: 0.02 * uniform(),
+      effectivePermittivity: 3 + uniform(),
+      lossSqrtDbPerM: 5 * uniform(),
+      lossLinearDbPerM: 5 * uniform(),
+    };
+  });
+}
+
+/** A thousand channels of random elements, built and cascaded. */
+function trials(): void {
+  const frequenciesHz = Float64Array.from({ length: trialPoints }, (_unused, k) => (k + 1) * 4e7);
+  const context: BuildContext = { signaling: 'single-ended', jointOhm: 50, parts: new Map() };
+  const s = through(2, trialPoints);
+  for (let trial = 0; trial < 1000; trial++) {
+    const elements = randomElements();
+    s.set(buildElement(elements[0]!, frequenciesHz, context).s);
+    for (let k = 1; k < elements.length; k++) {
+      cascadeInto(s, s, buildElement(elements[k]!, frequenciesHz, context).s, 2, trialPoints);
+    }
+  }
+}
+
 /** Ten thousand points of four ports, about as large as a long measurement. */
 function longMeasurement(): Network {
   const points = 10_000;
@@ -52,6 +95,7 @@ function main(): void {
   writeFileSync(path, writeTouchstone(network, { version: '1.1' }));
   cascades(2, 101);
   cascades(4, 51);
+  measure('trials-1000x20x500', trials, 5);
   measure('read-4x10000', () => readTouchstone('long.s4p', readFileSync(path)), 7);
   const written = join(folder, 'ours.s4p');
   measure('write-4x10000', () => writeFileSync(written, writeTouchstone(network, { version: '1.1' })), 5);

@@ -1,5 +1,6 @@
 /* The jobs of the bench as plain C loops: cc -O3. Prints one line "job seconds" each, the median of several runs.
  * Arguments: the Touchstone file of the reading job. */
+#include <math.h>
 #include <stdio.h>
 #include <stdlib.h>
 #include <string.h>
@@ -114,6 +115,64 @@ static void cascades(const char *job, int ports, int runs) {
   free(s), free(out), free(times);
 }
 
+static cplx quotient(cplx a, cplx b) { return mul(a, inverse(b)); }
+
+/* S of a line between 50 ohm ports, from its reflection and one pass. */
+static void line(cplx *s, const double *hz, int points, double z0, double length, double ee, double root, double linear) {
+  double g = (z0 - 50) / (z0 + 50);
+  double turn = 2 * M_PI * sqrt(ee) * length / 299792458.0;
+  for (int k = 0; k < points; k++, s += 4) {
+    double gigahertz = hz[k] * 1e-9;
+    double loss = (root * sqrt(gigahertz) + linear * gigahertz) * length / 8.685889638065035;
+    double one = exp(-loss), phase = turn * hz[k];
+    cplx p = {one * cos(phase), -one * sin(phase)};
+    cplx square = mul(p, p);
+    cplx d = {1 - g * g * square.re, -g * g * square.im};
+    cplx back = quotient((cplx){g * (1 - square.re), -g * square.im}, d);
+    cplx on = quotient((cplx){p.re * (1 - g * g), p.im * (1 - g * g)}, d);
+    s[0] = s[3] = back, s[1] = s[2] = on;
+  }
+}
+
+static void series(cplx *s, const double *hz, int points, double ohm, double henry) {
+  for (int k = 0; k < points; k++, s += 4) {
+    cplx q = {ohm / 100, 2 * M_PI * hz[k] * henry / 100};
+    cplx on = inverse((cplx){1 + q.re, q.im});
+    s[0] = s[3] = mul(q, on), s[1] = s[2] = on;
+  }
+}
+
+static void shunt(cplx *s, const double *hz, int points, double farad) {
+  for (int k = 0; k < points; k++, s += 4) {
+    cplx q = {0, 2 * M_PI * hz[k] * farad * 25};
+    cplx on = inverse((cplx){1 + q.re, q.im});
+    cplx back = mul(q, on);
+    s[0] = s[3] = (cplx){-back.re, -back.im}, s[1] = s[2] = on;
+  }
+}
+
+static void trials(int runs) {
+  enum { points = 500, elements = 20 };
+  double hz[points], *times = malloc(sizeof(double) * runs);
+  cplx s[points * 4], next[points * 4];
+  for (int k = 0; k < points; k++) hz[k] = (k + 1) * 4e7;
+  for (int run = 0; run < runs; run++) {
+    double started = now();
+    for (int trial = 0; trial < 1000; trial++)
+      for (int k = 0; k < elements; k++) {
+        cplx *to = k ? next : s;
+        if (k % 4 == 1) series(to, hz, points, uniform(), uniform() * 1e-10);
+        else if (k % 4 == 3) shunt(to, hz, points, uniform() * 1e-13);
+        else line(to, hz, points, 40 + 20 * uniform(), 0.02 * uniform(), 3 + uniform(), 5 * uniform(), 5 * uniform());
+        if (k) cascade2(s, s, next, points);
+      }
+    times[run] = now() - started;
+    if (s[run].re == 12345) puts("# never");
+  }
+  report("trials-1000x20x500", times, runs);
+  free(times);
+}
+
 static void reading(const char *path, int runs) {
   double *times = malloc(sizeof(double) * runs);
   for (int run = 0; run < runs; run++) {
@@ -156,6 +215,7 @@ int main(int argc, char **argv) {
   if (argc != 2) return 1;
   cascades("cascade-2-ports-20x2001", 2, 101);
   cascades("cascade-4-ports-20x2001", 4, 51);
+  trials(5);
   reading(argv[1], 7);
   return 0;
 }

@@ -53,7 +53,7 @@ async function ours() {
 
 function plainC() {
   const program = join(work, 'plain');
-  const built = spawnSync('gcc', ['-O3', '-o', program, join(root, 'test/bench/plain.c')], {
+  const built = spawnSync('gcc', ['-O3', '-o', program, join(root, 'test/bench/plain.c'), '-lm'], {
     encoding: 'utf8',
   });
   if (built.error || built.status !== 0) {

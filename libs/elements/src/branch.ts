@@ -1,4 +1,5 @@
 import type { Branch } from '@tollgate/contracts';
+import { writeSymmetric } from './symmetric';
 
 /**
  * A two-terminal branch at one frequency, as impedance or admittance, whichever is finite: `isAdmittance` says which.
@@ -70,13 +71,6 @@ function writeSplit(out: Float64Array, at: number, re: number, im: number, swap:
   const oneIm = -im / denominator;
   const restRe = (re * (1 + re) + im * im) / denominator;
   const restIm = im / denominator;
-  const [tRe, tIm, rRe, rIm] = swap ? [restRe, restIm, oneRe, oneIm] : [oneRe, oneIm, restRe, restIm];
-  out[at] = rRe;
-  out[at + 1] = rIm;
-  out[at + 2] = tRe;
-  out[at + 3] = tIm;
-  out[at + 4] = tRe;
-  out[at + 5] = tIm;
-  out[at + 6] = rRe;
-  out[at + 7] = rIm;
+  if (swap) writeSymmetric(out, at, oneRe, oneIm, restRe, restIm);
+  else writeSymmetric(out, at, restRe, restIm, oneRe, oneIm);
 }

@@ -1,6 +1,8 @@
 import { dbPerNeper, lightSpeedMPerS } from './constants';
 import type { BranchValue } from './branch';
 import { setValue } from './branch';
+import { writeSymmetric } from './symmetric';
+import { turnInto } from './turn';
 
 /** A uniform line of real impedance whose loss grows with sqrt(f) and f. */
 export interface LossyLine {
@@ -23,29 +25,60 @@ export function linePhaseRad(line: LossyLine, frequencyHz: number): number {
 }
 
 /**
- * S of a line between equal real references, from its own reflection and one pass: with G = (Zc - R)/(Zc + R) and
- * P = e^(-gamma l), S11 = G (1 - P^2)/(1 - G^2 P^2), S21 = P (1 - G^2)/(1 - G^2 P^2). Nothing large is subtracted, so S21 keeps
- * its relative accuracy however lossy the line (multiple reflections, Pozar 2.4).
+ * S of a line between equal real references at every frequency, from its own reflection and one pass: with
+ * G = (Zc - R)/(Zc + R) and P = e^(-gamma l), S11 = G (1 - P^2)/(1 - G^2 P^2), S21 = P (1 - G^2)/(1 - G^2 P^2). Nothing large is
+ * subtracted, so S21 keeps its relative accuracy however lossy the line (multiple reflections, Pozar 2.4).
+ *
+ * One loop with everything in it: this is where a check of many lines spends its time.
  */
-export function lineInto(
-  out: Float64Array,
-  at: number,
+export function lineTwoPort(
   line: LossyLine,
-  frequencyHz: number,
+  frequenciesHz: Float64Array,
   referenceOhm: number,
-): void {
-  const reflection = (line.z0Ohm - referenceOhm) / (line.z0Ohm + referenceOhm);
-  passInto(
-    out,
-    at,
-    reflection,
-    0,
-    lineLossDb(line, frequencyHz) / dbPerNeper,
-    linePhaseRad(line, frequencyHz),
-  );
+): Float64Array {
+  const points = frequenciesHz.length;
+  const out = new Float64Array(points * 8);
+  const g = (line.z0Ohm - referenceOhm) / (line.z0Ohm + referenceOhm);
+  const g2 = g * g;
+  const radPerHz = linePhaseRad(line, 1);
+  const rootNp = (line.lossSqrtDbPerM * line.lengthM) / (dbPerNeper * Math.sqrt(1e9));
+  const linearNp = (line.lossLinearDbPerM * line.lengthM) / (dbPerNeper * 1e9);
+  for (let point = 0, at = 0; point < points; point++, at += 8) {
+    const f = frequenciesHz[point]!;
+    const one = Math.exp(-(rootNp * Math.sqrt(f) + linearNp * f));
+    const phase = radPerHz * f;
+    turnInto(turn, phase);
+    const cos = turn[0]!;
+    const sin = turn[1]!;
+    const two = one * one;
+    // 1 - P^2 without cancellation for a short line: (1 - e^-2a) + e^-2a (1 - cos 2p + j sin 2p).
+    const nRe = 1 - two + 2 * two * sin * sin;
+    const nIm = 2 * two * sin * cos;
+    const dRe = 1 - g2 + g2 * nRe;
+    const dIm = g2 * nIm;
+    const inverse = 1 / (dRe * dRe + dIm * dIm);
+    const iRe = dRe * inverse;
+    const iIm = dIm * inverse;
+    const t = one * (1 - g2);
+    const tRe = t * (cos * iRe - sin * iIm);
+    const tIm = -t * (sin * iRe + cos * iIm);
+    const rRe = g * (nRe * iRe + nIm * iIm);
+    const rIm = g * (nIm * iRe - nRe * iIm);
+    out[at] = rRe;
+    out[at + 1] = rIm;
+    out[at + 2] = tRe;
+    out[at + 3] = tIm;
+    out[at + 4] = tRe;
+    out[at + 5] = tIm;
+    out[at + 6] = rRe;
+    out[at + 7] = rIm;
+  }
+  return out;
 }
 
-/** The same for a complex reflection; attenuation in nepers, phase in radians. */
+const turn = new Float64Array(2);
+
+/** The same at one frequency for a complex reflection; attenuation in nepers, phase in radians. */
 export function passInto(
   out: Float64Array,
   at: number,
@@ -86,25 +119,6 @@ export function passInto(
     (tRe * dRe + tIm * dIm) / size,
     (tIm * dRe - tRe * dIm) / size,
   );
-}
-
-/** A reciprocal, symmetric two-port. */
-export function writeSymmetric(
-  out: Float64Array,
-  at: number,
-  rRe: number,
-  rIm: number,
-  tRe: number,
-  tIm: number,
-): void {
-  out[at] = rRe;
-  out[at + 1] = rIm;
-  out[at + 2] = tRe;
-  out[at + 3] = tIm;
-  out[at + 4] = tRe;
-  out[at + 5] = tIm;
-  out[at + 6] = rRe;
-  out[at + 7] = rIm;
 }
 
 /**

@@ -1,5 +1,5 @@
 import type { ChannelElement, ElementOf } from '@tollgate/contracts';
-import { lineInto } from './line';
+import { lineTwoPort } from './line';
 import { pairOfLegs, pairOfModes } from './legs';
 import { filled, leakyCapacitanceWriter, seriesWriter } from './two-port';
 
@@ -15,14 +15,12 @@ type Builder<Kind extends PairKind> = (
 const builders: { readonly [Kind in PairKind]: Builder<Kind> } = {
   'coupled-line': (element, frequenciesHz, reference) => {
     const [even, odd] = modesOfCoupledLine(element).map((line) =>
-      filled((out, at, f) => lineInto(out, at, line, f, reference), frequenciesHz),
+      lineTwoPort(line, frequenciesHz, reference),
     );
     return pairOfModes(even!, odd!, frequenciesHz.length);
   },
   'line-pair': ({ p, n }, frequenciesHz, reference) => {
-    const [pLeg, nLeg] = [p, n].map((line) =>
-      filled((out, at, f) => lineInto(out, at, line, f, reference), frequenciesHz),
-    );
+    const [pLeg, nLeg] = [p, n].map((line) => lineTwoPort(line, frequenciesHz, reference));
     return pairOfLegs(pLeg!, nLeg!, frequenciesHz.length);
   },
   // The even mode meets L + M in each leg, the odd mode L - M.

@@ -1,6 +1,7 @@
 import { complexSqrt } from '@tollgate/network';
 import type { ElementOf } from '@tollgate/contracts';
-import { passInto, writeSymmetric } from './line';
+import { passInto } from './line';
+import { writeSymmetric } from './symmetric';
 
 const root = new Float64Array(2);
 
@@ -46,7 +47,7 @@ export function immittanceLineInto(
   const gRe2 = (zRe * yRe - zIm * yIm) * square;
   const gIm2 = (zRe * yIm + zIm * yRe) * square;
   if (Math.hypot(gRe2, gIm2) < shortSquare) {
-    shortInto(out, at, [zRe, zIm, yRe, yIm], lengthM, referenceOhm, gRe2, gIm2);
+    shortInto(out, at, zRe, zIm, yRe, yIm, lengthM, referenceOhm, gRe2, gIm2);
     return;
   }
   complexSqrt(root, 0, zRe * yRe - zIm * yIm, zRe * yIm + zIm * yRe);
@@ -67,14 +68,21 @@ export function immittanceLineInto(
 function shortInto(
   out: Float64Array,
   at: number,
-  [zRe, zIm, yRe, yIm]: readonly [number, number, number, number],
+  zRe: number,
+  zIm: number,
+  yRe: number,
+  yIm: number,
   lengthM: number,
   referenceOhm: number,
   gRe: number,
   gIm: number,
 ): void {
-  const [aRe, aIm] = series(gRe, gIm, 1 / 2, 1 / 12, 1 / 30);
-  const [hRe, hIm] = series(gRe, gIm, 1 / 6, 1 / 20, 1 / 42);
+  seriesInto(even, gRe, gIm, 1 / 2, 1 / 12, 1 / 30);
+  seriesInto(odd, gRe, gIm, 1 / 6, 1 / 20, 1 / 42);
+  const aRe = even[0]!;
+  const aIm = even[1]!;
+  const hRe = odd[0]!;
+  const hIm = odd[1]!;
   const scale = lengthM / referenceOhm;
   const back = lengthM * referenceOhm;
   const bRe = (zRe * hRe - zIm * hIm) * scale;
@@ -96,11 +104,15 @@ function shortInto(
   );
 }
 
+const even = new Float64Array(2);
+const odd = new Float64Array(2);
+
 /** 1 + a g (1 + b g (1 + c g)), complex. */
-function series(gRe: number, gIm: number, a: number, b: number, c: number): [number, number] {
-  let [re, im] = [1, 0];
-  for (const factor of [c, b, a]) {
-    [re, im] = [1 + factor * (re * gRe - im * gIm), factor * (re * gIm + im * gRe)];
-  }
-  return [re, im];
+function seriesInto(out: Float64Array, gRe: number, gIm: number, a: number, b: number, c: number): void {
+  const cRe = 1 + c * gRe;
+  const cIm = c * gIm;
+  const bRe = 1 + b * (cRe * gRe - cIm * gIm);
+  const bIm = b * (cRe * gIm + cIm * gRe);
+  out[0] = 1 + a * (bRe * gRe - bIm * gIm);
+  out[1] = a * (bRe * gIm + bIm * gRe);
 }

@@ -2,8 +2,9 @@ import type { ChannelElement, ElementOf } from '@tollgate/contracts';
 import { cascade2Into } from '@tollgate/network';
 import { branchAt, seriesInto, setValue, shuntInto, type BranchValue } from './branch';
 import { dbPerNeper } from './constants';
-import { lineInto, stubAt, writeSymmetric } from './line';
+import { lineTwoPort, stubAt } from './line';
 import { rlgcInto } from './rlgc';
+import { writeSymmetric } from './symmetric';
 
 /** Kinds that are a two-port, and stand once in each leg of a pair. */
 export type TwoPortKind =
@@ -24,8 +25,11 @@ export type PointWriter = (out: Float64Array, at: number, frequencyHz: number) =
 
 const value: BranchValue = { isAdmittance: false, re: 0, im: 0 };
 
+/** Kinds that come most often, each with a loop of its own. */
+type LoopedKind = 'line' | 'series' | 'shunt';
+
 type Writers = {
-  readonly [Kind in TwoPortKind]: (
+  readonly [Kind in Exclude<TwoPortKind, LoopedKind>]: (
     element: ElementOf<Kind>,
     referenceOhm: number,
   ) => PointWriter | readonly PointWriter[];
@@ -33,10 +37,7 @@ type Writers = {
 
 /** Each kind as one writer, or several that are cascaded. */
 const writers: Writers = {
-  line: (element, reference) => (out, at, f) => lineInto(out, at, element, f, reference),
   'rlgc-line': (element, reference) => (out, at, f) => rlgcInto(out, at, element, f, reference),
-  series: (element, reference) => seriesWriter(element, reference),
-  shunt: (element, reference) => shuntWriter(element, reference),
   stub: (element, reference) => stubWriter(element, reference),
   tee: ({ near, shunt, far }, reference) => [
     seriesWriter(near, reference),
@@ -70,7 +71,7 @@ const writers: Writers = {
 };
 
 export function isTwoPort(element: ChannelElement): element is ElementOf<TwoPortKind> {
-  return element.kind in writers;
+  return element.kind in writers || element.kind === 'line' || isBranch(element);
 }
 
 /** S of a two-port kind at every frequency, at `referenceOhm`. */
@@ -79,10 +80,31 @@ export function twoPort(
   frequenciesHz: Float64Array,
   referenceOhm: number,
 ): Float64Array {
+  if (element.kind === 'line') return lineTwoPort(element, frequenciesHz, referenceOhm);
+  if (isBranch(element)) return branchTwoPort(element, frequenciesHz, referenceOhm);
   const made = (
     writers[element.kind] as (element: never, referenceOhm: number) => PointWriter | readonly PointWriter[]
   )(element as never, referenceOhm);
   return typeof made === 'function' ? filled(made, frequenciesHz) : cascaded(made, frequenciesHz);
+}
+
+function isBranch(element: ChannelElement): element is ElementOf<'series' | 'shunt'> {
+  return element.kind === 'series' || element.kind === 'shunt';
+}
+
+function branchTwoPort(
+  element: ElementOf<'series' | 'shunt'>,
+  frequenciesHz: Float64Array,
+  referenceOhm: number,
+): Float64Array {
+  const out = new Float64Array(frequenciesHz.length * 8);
+  const series = element.kind === 'series';
+  for (let point = 0; point < frequenciesHz.length; point++) {
+    branchAt(element, frequenciesHz[point]!, value);
+    if (series) seriesInto(out, point * 8, value, referenceOhm);
+    else shuntInto(out, point * 8, value, referenceOhm);
+  }
+  return out;
 }
 
 export function filled(write: PointWriter, frequenciesHz: Float64Array): Float64Array {
@@ -145,7 +167,8 @@ function stubWriter(element: ElementOf<'stub'>, reference: number): PointWriter 
       // Reflection of the load in the stub's own impedance, from Z or from Y.
       const sign = load.isAdmittance ? -1 : 1;
       const scale = load.isAdmittance ? element.z0Ohm : 1 / element.z0Ohm;
-      const [re, im] = [load.re * scale, load.im * scale];
+      const re = load.re * scale;
+      const im = load.im * scale;
       const size = (re + 1) * (re + 1) + im * im;
       gRe = (sign * (re * re + im * im - 1)) / size;
       gIm = (sign * 2 * im) / size;
@@ -192,7 +215,8 @@ function budgetLossWriter(element: ElementOf<'budget-loss'>): PointWriter {
     // No more is returned than is not let through.
     const reflection = Math.min(wanted, Math.sqrt(Math.max(0, 1 - transmission * transmission)));
     const angle = -2 * Math.PI * f * (delayS ?? 0);
-    const [cos, sin] = [Math.cos(angle), Math.sin(angle)];
+    const cos = Math.cos(angle);
+    const sin = Math.sin(angle);
     writeSymmetric(out, at, -reflection * sin, reflection * cos, transmission * cos, transmission * sin);
   };
 }

@@ -4,7 +4,7 @@ import { cascade4Into } from '@tollgate/network';
 import { dbPerNeper, lightSpeedMPerS } from '../constants';
 import { pairOfLegs, pairOfModes } from '../legs';
 import { immittanceLineInto } from '../rlgc';
-import { writeSymmetric } from '../line';
+import { writeSymmetric } from '../symmetric';
 import {
   ElementError,
   type BuildContext,
