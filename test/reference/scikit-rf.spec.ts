@@ -13,7 +13,7 @@ import { solveByKirchhoff } from './kirchhoff';
 /** Drawn once: every channel is checked by the engine, by Kirchhoff's laws and by scikit-rf, in one process for all. */
 const draw = (arbitrary: fc.Arbitrary<RandomChannel>, numRuns: number, seed: number) =>
   fc.sample(arbitrary, { numRuns, seed });
-const channels = [...draw(singleEndedChannel, 120, 20261201), ...draw(differentialChannel, 120, 20261202)];
+const channels = [...draw(singleEndedChannel, 105, 20261201), ...draw(differentialChannel, 105, 20261202)];
 let evaluated: Evaluated[] = [];
 
 beforeAll(() => {
@@ -31,7 +31,7 @@ function apart(s: readonly Float64Array[], tolerance: number) {
 const kirchhoff = ({ channel, frequenciesHz }: Evaluated, { parts }: RandomChannel) =>
   solveByKirchhoff(channel, [...frequenciesHz], parts);
 
-describe('240 random channels', () => {
+describe('210 random channels', () => {
   it('are of 3 to 30 elements of every circuit kind, with 0 Hz and resonances of stubs among their frequencies', () => {
     const rows = evaluated.map(({ channel }) => channel.elements);
     const lengths = rows.map((row) => row.length);
@@ -64,11 +64,11 @@ describe('240 random channels', () => {
   }, 120_000);
 });
 
-describeWith(scikitRf, '240 random channels, in scikit-rf 0.15.4', () => {
+describeWith(scikitRf, '210 random channels, in scikit-rf 0.15.4', () => {
   it('agree to 1e-6', () => {
     const { version, s } = byScikitRf(evaluated);
     expect(version).toBe('0.15.4');
-    expect(s).toHaveLength(240);
+    expect(s).toHaveLength(210);
     expect(apart(s, 1e-6)).toEqual([]);
   }, 180_000);
 });
