@@ -3,6 +3,7 @@ import { recordMigrations } from './202606010900-record';
 import { peopleMigrations } from './202606010910-people';
 import { boardMigrations } from './202606010920-boards';
 import { channelMigrations } from './202606010930-channels';
+import { stackupMigrations } from './202612011400-stackups';
 
 /** Every step in order. A static list survives bundling; a step once released is never edited, only followed. */
 export const migrations: readonly Migration[] = [
@@ -10,4 +11,5 @@ export const migrations: readonly Migration[] = [
   ...peopleMigrations,
   ...boardMigrations,
   ...channelMigrations,
+  ...stackupMigrations,
 ];

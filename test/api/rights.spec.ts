@@ -2,6 +2,7 @@ import { rightOf, roles, roleAllows, type Role } from '@tollgate/contracts';
 import { routeName, type Route } from '../../server/src/platform/http';
 import type { TestClient } from '../support/client';
 import { TestServer } from '../support/server';
+import { stackupLayers } from '../support/stackups';
 
 interface World {
   readonly boardId: string;
@@ -9,6 +10,7 @@ interface World {
   readonly linkId: string;
   readonly channelId: string;
   readonly fileId: string;
+  readonly stackupId: string;
   readonly personId: string;
 }
 
@@ -50,12 +52,20 @@ beforeAll(async () => {
       '# GHz S RI R 50\n1 0 0 1 0 1 0 0 0\n2 0 0 1 0 1 0 0 0\n',
     )
   ).body;
+  const stackup = (
+    await maker.post(
+      `/api/revisions/${revisionId}/stackups`,
+      { document: { layers: stackupLayers() }, why: 'First' },
+      { 'if-match': '"0"' },
+    )
+  ).body;
   world = {
     boardId: board.id,
     revisionId,
     linkId: link.id,
     channelId: made.id,
     fileId: file.id,
+    stackupId: stackup.id,
     personId: none,
   };
 }, 120_000);

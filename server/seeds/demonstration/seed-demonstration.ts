@@ -6,10 +6,12 @@ import type { BoardsService } from '../../src/features/boards';
 import type { ChannelsService } from '../../src/features/channels';
 import type { FilesService } from '../../src/features/files';
 import type { MasksRepository } from '../../src/features/masks';
+import type { StackupsService } from '../../src/features/stackups';
 import { createPeopleRepository, type PeopleService } from '../../src/features/people';
 import { backplaneChannels, lineCardChannels, type DemoChannel, type DemoFiles } from './channels';
 import { demoParts, streamOf } from './parts';
 import { seedPeople, type DemoPeople } from './people';
+import { lineCardStackups } from './stackups';
 
 export interface SeedNeeds {
   readonly config: Config;
@@ -19,6 +21,7 @@ export interface SeedNeeds {
   readonly files: FilesService;
   readonly channels: ChannelsService;
   readonly masks: MasksRepository;
+  readonly stackups: StackupsService;
   readonly unitOfWork: UnitOfWork;
 }
 
@@ -36,6 +39,8 @@ export async function seedDemonstration(needs: SeedNeeds): Promise<void> {
     'Switch, mezzanine and module cages; the demonstration board.',
     ['2026-06-30', '2026-12-18'],
   );
+  for (const [seen, version] of lineCardStackups.entries())
+    await needs.stackups.create(people.engineer, heron.revisionId, seen, version);
   await fill(needs, people.engineer, heron.boardId, heron.revisionId, (files) =>
     lineCardChannels(files, mask('93-KR4-IL'), mask('83E-C2M-IL')),
   );

@@ -29,6 +29,15 @@ import { createMasksRepository, maskRoutes } from './masks';
 import { createPeopleRepository, createPeopleService, peopleRoutes } from './people';
 import { createPassport, createThrottle, sessionRoutes } from './session';
 import { sheetRoutes } from './sheets';
+import {
+  createFollowStackup,
+  createSectionsRepository,
+  createStackupsRepository,
+  createStackupsService,
+  createUseStackup,
+  DeskService,
+  stackupRoutes,
+} from './stackups';
 import { ChangeFeed, streamRoutes } from './stream';
 
 const dayMs = 24 * 3600 * 1000;
@@ -59,22 +68,35 @@ export function createFeatures(config: Config, clock: Clock, sequelize: Sequeliz
   const channelRows = createChannelsRepository(sequelize);
   const drafts = createDraftEvents(channelRows, unitOfWork);
   const resolve = createResolveChannel(files, masks);
+  const stackupRows = createStackupsRepository(sequelize);
+  const sections = createSectionsRepository(sequelize);
+  const desk = new DeskService({ sections, unitOfWork });
   const channels = createChannelsService({
     config,
     repository: channelRows,
     checks,
     pool,
     resolve,
+    follow: createFollowStackup(stackupRows),
     drafts,
     unitOfWork,
   });
   const exchange = createExchangeService({ channels, repository: channelRows, files, store });
   const boardRows = createBoardsRepository(sequelize);
+  const stackups = createStackupsService({ repository: stackupRows, boards: boardRows, unitOfWork });
+  const use = createUseStackup({
+    repository: stackupRows,
+    channels: channelRows,
+    boards: boardRows,
+    drafts,
+    unitOfWork,
+  });
   const boards = createBoardsService({
     repository: boardRows,
     people,
     unitOfWork,
     copyChannels: (...copied) => channels.copy(...copied),
+    startStackup: (...started) => stackups.start(...started),
   });
 
   handlers.set('mail', mailHandler(sequelize, clock, config.smtpUrl, sender));
@@ -90,6 +112,7 @@ export function createFeatures(config: Config, clock: Clock, sequelize: Sequeliz
     await throttle.sweep();
     await feed.sweep(new Date(now.getTime() - dayMs));
     await checks.sweep(new Date(now.getTime() - dayMs));
+    await sections.sweep(new Date(now.getTime() - 90 * dayMs));
     await jobs.sweep(new Date(now.getTime() - 7 * dayMs));
     await jobs.queue('sweep', {}, 'sweep-next', new Date(now.getTime() + dayMs));
   });
@@ -106,6 +129,7 @@ export function createFeatures(config: Config, clock: Clock, sequelize: Sequeliz
     ...revisionRoutes(boards, boardRows),
     ...fileRoutes(files),
     ...channelRoutes({ channels, exchange, repository: channelRows, boards: boardRows }),
+    ...stackupRoutes({ stackups, use, desk, repository: stackupRows, boards: boardRows }),
     ...sheetRoutes({ config, clock, channels, boardOf: (channelId) => channelRows.boardOf(channelId) }),
     ...streamRoutes(feed, boardRows.isMember),
   ];
@@ -129,7 +153,17 @@ export function createFeatures(config: Config, clock: Clock, sequelize: Sequeliz
         for (const { key, document } of maskSeeds) await masks.put(work, key, document);
       });
       if (config.demonstration)
-        await seedDemonstration({ config, sequelize, people, boards, files, channels, masks, unitOfWork });
+        await seedDemonstration({
+          config,
+          sequelize,
+          people,
+          boards,
+          files,
+          channels,
+          masks,
+          stackups,
+          unitOfWork,
+        });
     },
 
     begin(): void {
@@ -142,7 +176,7 @@ export function createFeatures(config: Config, clock: Clock, sequelize: Sequeliz
     async end(): Promise<void> {
       feed.stop();
       await jobs.stop();
-      await pool.stop();
+      await Promise.all([pool.stop(), desk.stop()]);
     },
   };
 }

@@ -22,6 +22,9 @@ export type CopyChannels = (
   links: ReadonlyMap<string, string>,
 ) => Promise<void>;
 
+/** Gives a revision the stackup of the one it comes after; given by the stackups' own feature. */
+export type StartStackup = (work: Work, from: RevisionRow, to: RevisionRow) => Promise<void>;
+
 export type BoardsService = ReturnType<typeof createBoardsService>;
 
 interface Needs {
@@ -29,9 +32,10 @@ interface Needs {
   readonly people: PeopleService;
   readonly unitOfWork: UnitOfWork;
   readonly copyChannels: CopyChannels;
+  readonly startStackup: StartStackup;
 }
 
-export function createBoardsService({ repository, people, unitOfWork, copyChannels }: Needs) {
+export function createBoardsService({ repository, people, unitOfWork, copyChannels, startStackup }: Needs) {
   async function summaries(rows: readonly RevisionRow[]) {
     const ids = rows.map((row) => row.id);
     const [tallies, worsts] = await Promise.all([repository.tallies(ids), repository.worst(ids)]);
@@ -208,6 +212,8 @@ export function createBoardsService({ repository, people, unitOfWork, copyChanne
           createdAt: work.at,
         };
         await repository.insertRevision(work, row);
+        const before = source ?? siblings.at(-1);
+        if (before) await startStackup(work, before, row);
         if (source) await copyInto(work, source, row);
         work.event({
           what: 'revision.created',

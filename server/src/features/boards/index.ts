@@ -1,4 +1,9 @@
 export { createBoardsRepository, type BoardsRepository } from './boards.repository';
 export { boardRoutes, revisionRoutes } from './boards.routes';
-export { createBoardsService, type BoardsService, type CopyChannels } from './boards.service';
+export {
+  createBoardsService,
+  type BoardsService,
+  type CopyChannels,
+  type StartStackup,
+} from './boards.service';
 export type { RevisionRow } from './boards.model';

@@ -31,7 +31,7 @@ export interface ChannelRow {
 
 export interface UseRow {
   channelId: string;
-  kind: 'mask-set-revision' | 'board-file';
+  kind: 'mask-set-revision' | 'board-file' | 'stackup-version';
   usedId: string;
 }
 

@@ -1,4 +1,5 @@
 import { randomUUID } from 'node:crypto';
+import type { Transaction } from 'sequelize';
 import { partsNeeded, readChannel } from '@tollgate/budget';
 import {
   parseChannelFile,
@@ -34,6 +35,13 @@ interface Examined {
 /** Gives a document its stored form inside the unit of work that stores it. */
 export type Place = (work: Work, channel: CompleteChannel) => Promise<CompleteChannel>;
 
+/** Which stackup version a draft follows, as far as it is known here, and whether a newer one stands; given by the stackups' own feature. */
+export type FollowStackup = (
+  revisionId: string,
+  channel: CompleteChannel,
+  transaction: Transaction,
+) => Promise<{ readonly versionId: string | undefined; readonly behind: boolean }>;
+
 export type ChannelsService = ReturnType<typeof createChannelsService>;
 
 interface Needs {
@@ -42,12 +50,13 @@ interface Needs {
   readonly checks: ChecksRepository;
   readonly pool: CheckPool;
   readonly resolve: ResolveChannel;
+  readonly follow: FollowStackup;
   readonly drafts: DraftEvents;
   readonly unitOfWork: UnitOfWork;
 }
 
 export function createChannelsService(needs: Needs) {
-  const { config, repository, checks, pool, resolve, drafts, unitOfWork } = needs;
+  const { config, repository, checks, pool, resolve, follow, drafts, unitOfWork } = needs;
 
   /** Reads, resolves and runs; what stands in the way of a check is returned, not thrown. */
   async function examine(
@@ -72,12 +81,20 @@ export function createChannelsService(needs: Needs) {
   }
 
   /** The columns a check sets, and its row. */
-  async function record(work: Work, channelId: string, examined: Examined): Promise<Partial<ChannelRow>> {
+  async function record(
+    work: Work,
+    { id, revisionId }: Pick<ChannelRow, 'id' | 'revisionId'>,
+    channel: CompleteChannel,
+    examined: Examined,
+  ): Promise<Partial<ChannelRow>> {
     const { outcome } = examined;
     if (outcome) await checks.keep(work, outcome);
-    await repository.setUses(work, channelId, examined.uses);
+    const { versionId, behind } = await follow(revisionId, channel, work.transaction);
+    const stackup = versionId ? [{ kind: 'stackup-version' as const, usedId: versionId }] : [];
+    await repository.setUses(work, id, [...examined.uses, ...stackup]);
     return {
-      outOfDate: false,
+      // A draft that follows the revision's stackup stays out of date until it takes the newest version.
+      outOfDate: behind,
       fingerprint: outcome?.fingerprint ?? null,
       verdict: outcome?.summary.verdict ?? 'not-checked',
       worstMarginDb: outcome?.summary.worstMarginDb ?? null,
@@ -136,7 +153,8 @@ export function createChannelsService(needs: Needs) {
           work,
           emptyRow(id, revisionId, linkId, place ? await place(work, channel) : channel, work),
         );
-        if (examined) await repository.update(work, id, await record(work, id, examined));
+        if (examined)
+          await repository.update(work, id, await record(work, { id, revisionId }, channel, examined));
         work.event({
           what: 'channel.created',
           subject: id,
@@ -165,7 +183,7 @@ export function createChannelsService(needs: Needs) {
       const overtaken = await unitOfWork(actorOf(caller), async (work) => {
         const now = await repository.locked(work, channelId);
         if (now.version !== version) return true;
-        const columns = await record(work, channelId, examined);
+        const columns = await record(work, now, channel, examined);
         const { name, signaling } = channel;
         await repository.update(work, channelId, {
           ...columns,
@@ -238,7 +256,8 @@ export function createChannelsService(needs: Needs) {
         const now = await repository.locked(work, channelId);
         // A save in the meantime has brought its own check.
         if (now.version !== row.version) return;
-        await repository.update(work, channelId, await record(work, channelId, examined));
+        const channel = JSON.parse(row.document) as CompleteChannel;
+        await repository.update(work, channelId, await record(work, now, channel, examined));
         work.change({
           what: 'channel.checked',
           boardId: row.boardId,

@@ -1,6 +1,6 @@
 export { channelRoutes } from './channels.routes';
-export { createChannelsRepository } from './channels.repository';
-export { createChannelsService, type ChannelsService } from './channels.service';
-export { closeDraftJob, createDraftEvents } from './draft-events';
+export { createChannelsRepository, type ChannelsRepository } from './channels.repository';
+export { createChannelsService, type ChannelsService, type FollowStackup } from './channels.service';
+export { closeDraftJob, createDraftEvents, type DraftEvents } from './draft-events';
 export { createExchangeService } from './exchange.service';
 export { createResolveChannel } from './resolve-channel';

@@ -1,8 +1,7 @@
-import { existsSync } from 'node:fs';
-import { fileURLToPath } from 'node:url';
 import { Piscina } from 'piscina';
 import { problems } from '../../platform/http';
 import { errorFacts, log } from '../../platform/log';
+import { workerFile } from '../../platform/threads';
 import { CheckQueue } from './check-queue';
 import type { CheckOutcome, CheckTask, TaskResult } from './check-task';
 import type { FieldProblem } from '@tollgate/contracts';
@@ -24,7 +23,7 @@ export class CheckPool {
 
   constructor(threads: number) {
     this.pool = new Piscina<CheckTask, TaskResult>({
-      ...workerFile(),
+      ...workerFile(import.meta.url, 'check.worker'),
       minThreads: 1,
       maxThreads: threads,
       idleTimeout: 600_000,
@@ -56,17 +55,4 @@ export class CheckPool {
     this.remembered.set(outcome.fingerprint, outcome);
     if (this.remembered.size > mostRemembered) this.remembered.delete(this.remembered.keys().next().value!);
   }
-}
-
-/** Bundled, the worker lies beside main; from source it is run through tsx. */
-function workerFile(): { filename: string; execArgv?: string[]; env?: Record<string, string> } {
-  const bundled = fileURLToPath(new URL('./check.worker.mjs', import.meta.url));
-  if (existsSync(bundled)) return { filename: bundled };
-  // tsx finds the libraries' aliases in the base configuration only.
-  const TSX_TSCONFIG_PATH = fileURLToPath(new URL('../../../../tsconfig.base.json', import.meta.url));
-  return {
-    filename: fileURLToPath(new URL('./check.worker.ts', import.meta.url)),
-    execArgv: ['--import', 'tsx'],
-    env: { ...(process.env as Record<string, string>), TSX_TSCONFIG_PATH },
-  };
 }

@@ -1,0 +1,44 @@
+import { createHash } from 'node:crypto';
+import { Op, type Sequelize } from 'sequelize';
+import { engineVersion } from '@tollgate/budget';
+import type { SolvedSection } from '@tollgate/elements';
+import type { Work } from '../../platform/work';
+import { defineSolutions } from './stackups.model';
+
+export type SectionsRepository = ReturnType<typeof createSectionsRepository>;
+
+/** Solved cross-sections by their content: what one thread or node has solved, the others need not. */
+export function createSectionsRepository(sequelize: Sequelize) {
+  const solutions = defineSolutions(sequelize);
+  return {
+    async find(key: string): Promise<SolvedSection | undefined> {
+      const row = await solutions.findByPk(addressOf(key));
+      return row ? { key, solution: JSON.parse(row.get().solution) as SolvedSection['solution'] } : undefined;
+    },
+
+    async keep(work: Work, { key, solution }: SolvedSection): Promise<void> {
+      await solutions.bulkCreate(
+        [
+          {
+            sha256: addressOf(key),
+            engine: engineVersion,
+            solution: JSON.stringify(solution),
+            createdAt: work.at,
+          },
+        ],
+        { ignoreDuplicates: true, transaction: work.transaction },
+      );
+    },
+
+    /** Drops what another engine solved, and what is older. */
+    async sweep(before: Date): Promise<void> {
+      await solutions.destroy({
+        where: { [Op.or]: [{ engine: { [Op.ne]: engineVersion } }, { createdAt: { [Op.lt]: before } }] },
+      });
+    },
+  };
+}
+
+function addressOf(key: string): string {
+  return createHash('sha256').update(`${engineVersion}\n${key}`).digest('hex');
+}
