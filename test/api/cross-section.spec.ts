@@ -71,7 +71,7 @@ describe('the cross-section desk', () => {
 
   it('keeps a solved section in the database, by its content', async () => {
     const count = async () =>
-      ((await server.server.sequelize.query('SELECT sha256 FROM section_solutions'))[0]).length;
+      (await server.server.sequelize.query('SELECT sha256 FROM section_solutions'))[0].length;
     await ask({ widthM: '131 um', sensitivities: false });
     const before = await count();
     await ask({ widthM: '131 um', frequencyHz: '3 GHz', sensitivities: false });

@@ -35,7 +35,11 @@ export function createUseStackup({ repository, channels, boards, drafts, unitOfW
       changedBy: work.actor.personId,
     });
     await drafts.saved(work, now, version.boardId);
-    work.job({ kind: 'recheck', payload: { channelId }, dedupeKey: `recheck:${channelId}:${now.version + 1}` });
+    work.job({
+      kind: 'recheck',
+      payload: { channelId },
+      dedupeKey: `recheck:${channelId}:${now.version + 1}`,
+    });
     work.change({
       what: 'channel.saved',
       boardId: version.boardId,
