@@ -18,30 +18,25 @@ export function turnInto(out: Float64Array, angleRad: number): void {
   }
   const quarters = Math.floor(angleRad * quartersPerRad + 0.5);
   const x = angleRad - quarters * quarterHigh - quarters * quarterMiddle - quarters * quarterLow;
+  // Both series in pairs of terms, so that a processor can work on several at once.
   const y = x * x;
+  const y2 = y * y;
+  const y4 = y2 * y2;
   const sin =
     x +
     x *
       y *
       (-1 / 6 +
-        y *
-          (1 / 120 +
-            y *
-              (-1 / 5040 +
-                y * (1 / 362880 + y * (-1 / 39916800 + y * (1 / 6227020800 + y * (-1 / 1307674368000)))))));
+        y * (1 / 120) +
+        y2 * (-1 / 5040 + y * (1 / 362880)) +
+        y4 * (-1 / 39916800 + y * (1 / 6227020800) + y2 * (-1 / 1307674368000 + y * (1 / 355687428096000))));
   const cos =
     1 +
     y *
       (-1 / 2 +
-        y *
-          (1 / 24 +
-            y *
-              (-1 / 720 +
-                y *
-                  (1 / 40320 +
-                    y *
-                      (-1 / 3628800 +
-                        y * (1 / 479001600 + y * (-1 / 87178291200 + y * (1 / 20922789888000))))))));
+        y * (1 / 24) +
+        y2 * (-1 / 720 + y * (1 / 40320)) +
+        y4 * (-1 / 3628800 + y * (1 / 479001600) + y2 * (-1 / 87178291200 + y * (1 / 20922789888000))));
   const odd = (quarters & 1) !== 0;
   const a = odd ? sin : cos;
   const b = odd ? cos : sin;

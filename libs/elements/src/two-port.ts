@@ -1,10 +1,12 @@
 import type { ChannelElement, ElementOf } from '@tollgate/contracts';
 import { cascade2Into } from '@tollgate/network';
 import { branchAt, seriesInto, setValue, shuntInto, type BranchValue } from './branch';
+import { budgetLossWriter } from './budget-loss';
 import { dbPerNeper } from './constants';
 import { lineTwoPort, stubAt } from './line';
 import { rlgcInto } from './rlgc';
 import { writeSymmetric } from './symmetric';
+import type { PointWriter } from './types';
 
 /** Kinds that are a two-port, and stand once in each leg of a pair. */
 export type TwoPortKind =
@@ -19,9 +21,6 @@ export type TwoPortKind =
   | 'attenuator'
   | 'budget-loss'
   | 'capacitor';
-
-/** Writes one point to out[at..at+7]. */
-export type PointWriter = (out: Float64Array, at: number, frequencyHz: number) => void;
 
 const value: BranchValue = { isAdmittance: false, re: 0, im: 0 };
 
@@ -74,18 +73,28 @@ export function isTwoPort(element: ChannelElement): element is ElementOf<TwoPort
   return element.kind in writers || element.kind === 'line' || isBranch(element);
 }
 
+/** S of a two-port, and at how many points a wave is trapped without loss between the parts it is made of. */
+export interface TwoPort {
+  readonly s: Float64Array;
+  readonly trappedPoints: number;
+}
+
 /** S of a two-port kind at every frequency, at `referenceOhm`. */
 export function twoPort(
   element: ElementOf<TwoPortKind>,
   frequenciesHz: Float64Array,
   referenceOhm: number,
-): Float64Array {
-  if (element.kind === 'line') return lineTwoPort(element, frequenciesHz, referenceOhm);
-  if (isBranch(element)) return branchTwoPort(element, frequenciesHz, referenceOhm);
+): TwoPort {
+  if (element.kind === 'line') return whole(lineTwoPort(element, frequenciesHz, referenceOhm));
+  if (isBranch(element)) return whole(branchTwoPort(element, frequenciesHz, referenceOhm));
   const made = (
     writers[element.kind] as (element: never, referenceOhm: number) => PointWriter | readonly PointWriter[]
   )(element as never, referenceOhm);
-  return typeof made === 'function' ? filled(made, frequenciesHz) : cascaded(made, frequenciesHz);
+  return typeof made === 'function' ? whole(filled(made, frequenciesHz)) : cascaded(made, frequenciesHz);
+}
+
+function whole(s: Float64Array): TwoPort {
+  return { s, trappedPoints: 0 };
 }
 
 function isBranch(element: ChannelElement): element is ElementOf<'series' | 'shunt'> {
@@ -99,6 +108,18 @@ function branchTwoPort(
 ): Float64Array {
   const out = new Float64Array(frequenciesHz.length * 8);
   const series = element.kind === 'series';
+  const { resistanceOhm = 0, inductanceH = 0, capacitanceF } = element;
+  if (series && capacitanceF === undefined) {
+    // q = Z/(2R)
+    const scale = 1 / (2 * referenceOhm);
+    splitInto(out, frequenciesHz, resistanceOhm * scale, 2 * Math.PI * inductanceH * scale, 1);
+    return out;
+  }
+  if (!series && capacitanceF !== undefined && resistanceOhm === 0 && inductanceH === 0) {
+    // q = Y R/2
+    splitInto(out, frequenciesHz, 0, Math.PI * capacitanceF * referenceOhm, -1);
+    return out;
+  }
   for (let point = 0; point < frequenciesHz.length; point++) {
     branchAt(element, frequenciesHz[point]!, value);
     if (series) seriesInto(out, point * 8, value, referenceOhm);
@@ -107,17 +128,46 @@ function branchTwoPort(
   return out;
 }
 
+/** A branch whose q = re + j f imPerHz needs no choice between impedance and admittance: S21 = 1/(1 + q), S11 = sign q/(1 + q). */
+function splitInto(
+  out: Float64Array,
+  frequenciesHz: Float64Array,
+  re: number,
+  imPerHz: number,
+  sign: 1 | -1,
+): void {
+  const one = 1 + re;
+  for (let point = 0, at = 0; point < frequenciesHz.length; point++, at += 8) {
+    const im = imPerHz * frequenciesHz[point]!;
+    const inverse = 1 / (one * one + im * im);
+    const tRe = one * inverse;
+    const tIm = -im * inverse;
+    const rRe = sign * (re * one + im * im) * inverse;
+    const rIm = sign * im * inverse;
+    out[at] = rRe;
+    out[at + 1] = rIm;
+    out[at + 2] = tRe;
+    out[at + 3] = tIm;
+    out[at + 4] = tRe;
+    out[at + 5] = tIm;
+    out[at + 6] = rRe;
+    out[at + 7] = rIm;
+  }
+}
+
 export function filled(write: PointWriter, frequenciesHz: Float64Array): Float64Array {
   const out = new Float64Array(frequenciesHz.length * 8);
   for (let point = 0; point < frequenciesHz.length; point++) write(out, point * 8, frequenciesHz[point]!);
   return out;
 }
 
-function cascaded(parts: readonly PointWriter[], frequenciesHz: Float64Array): Float64Array {
+function cascaded(parts: readonly PointWriter[], frequenciesHz: Float64Array): TwoPort {
   const [first, ...rest] = parts;
-  const out = filled(first!, frequenciesHz);
-  for (const part of rest) cascade2Into(out, out, filled(part, frequenciesHz), frequenciesHz.length);
-  return out;
+  const s = filled(first!, frequenciesHz);
+  let trappedPoints = 0;
+  for (const part of rest)
+    trappedPoints += cascade2Into(s, s, filled(part, frequenciesHz), frequenciesHz.length);
+  return { s, trappedPoints };
 }
 
 type Parts = { resistanceOhm?: number; inductanceH?: number; capacitanceF?: number };
@@ -200,23 +250,4 @@ function padInto(
   const p = Math.exp(-attenuationDb / dbPerNeper);
   const denominator = 1 - g * g * p * p;
   writeSymmetric(out, at, (g * (1 - p * p)) / denominator, 0, (p * (1 - g * g)) / denominator, 0);
-}
-
-/**
- * A placeholder: loss that falls to 0 with sqrt(f) or f, matched, or with a stated return loss. The reflection is taken in
- * quadrature to the transmission, which keeps it passive as long as the power it returns is not more than what the loss leaves.
- */
-function budgetLossWriter(element: ElementOf<'budget-loss'>): PointWriter {
-  const { lossDb, atHz, shape, returnLossDb, delayS } = element;
-  return (out, at, f) => {
-    const ratio = shape === 'sqrt' ? Math.sqrt(f / atHz) : f / atHz;
-    const transmission = 10 ** ((-lossDb * ratio) / 20);
-    const wanted = returnLossDb === undefined ? 0 : 10 ** (-returnLossDb / 20);
-    // No more is returned than is not let through.
-    const reflection = Math.min(wanted, Math.sqrt(Math.max(0, 1 - transmission * transmission)));
-    const angle = -2 * Math.PI * f * (delayS ?? 0);
-    const cos = Math.cos(angle);
-    const sin = Math.sin(angle);
-    writeSymmetric(out, at, -reflection * sin, reflection * cos, transmission * cos, transmission * sin);
-  };
 }
