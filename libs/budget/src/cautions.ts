@@ -1,6 +1,7 @@
 import { evaluationHz, type CompleteChannel, type Warning } from '@tollgate/contracts';
 import { commonBand, spokenHz, type Coverage } from '@tollgate/masks';
 import type { Evaluation } from './chain';
+import { jointOhmOf, referencesOf } from './references';
 
 /** What a person should know of a channel that was checked, beside its grid. */
 export function cautionsOf(
@@ -8,7 +9,12 @@ export function cautionsOf(
   facts: Evaluation['facts'],
   coverage: readonly Coverage[],
 ): Warning[] {
-  return [...ofParts(facts), ...ofStackup(channel), ...ofEvaluation(channel, coverage)];
+  return [
+    ...ofParts(facts),
+    ...ofPlaceholders(channel),
+    ...ofStackup(channel),
+    ...ofEvaluation(channel, coverage),
+  ];
 }
 
 /** Below this an interpolated S is as good as the file's own. */
@@ -23,6 +29,22 @@ function ofParts(facts: Evaluation['facts']): Warning[] {
       messages.push(`Interpolated between the file's points: its S may be off by about ${error}.`);
     }
     return messages.map((message) => ({ path: `elements[${i}]`, message }));
+  });
+}
+
+/** A placeholder is matched in one real reference; where the channel's ports have others, it is not matched in theirs. */
+function ofPlaceholders(channel: CompleteChannel): Warning[] {
+  const reference = referencesOf(channel);
+  const jointOhm = jointOhmOf(reference);
+  const isJoint = (value: number, k: number): boolean => value === (k % 2 === 0 ? jointOhm : 0);
+  if (reference.every(isJoint)) return [];
+  return channel.elements.flatMap((element, i) => {
+    const holds =
+      element.kind === 'budget-loss' ||
+      (element.kind === 'connector' && element.circuit?.some(({ kind }) => kind === 'budget-loss'));
+    if (!holds) return [];
+    const message = `A placeholder is matched in one real reference, here ${jointOhm} ohm; the channel's ports differ or are complex, and it is not matched in all of them.`;
+    return [{ path: `elements[${i}]`, message }];
   });
 }
 

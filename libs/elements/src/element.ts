@@ -1,5 +1,6 @@
 import type { ChannelElement, ElementOf } from '@tollgate/contracts';
 import { cascade2Into, cascade4Into } from '@tollgate/network';
+import { budgetLossWarnings } from './budget-loss';
 import { pairOfLegs } from './legs';
 import { isPair, pairPort } from './pair';
 import { buildPart, partCoverage, partKey } from './part';
@@ -45,18 +46,20 @@ export function buildElement(
   }
   if (element.kind === 'trace') return buildTrace(element, frequenciesHz, context);
   if (element.kind === 'via') return buildVia(element, frequenciesHz, context);
-  return { s: circuitKind(element, frequenciesHz, context), warnings: [] };
+  return circuitKind(element, frequenciesHz, context);
 }
 
 function circuitKind(
   element: ChannelElement,
   frequenciesHz: Float64Array,
   { signaling, jointOhm }: BuildContext,
-): Float64Array {
-  if (isPair(element)) return pairPort(element, frequenciesHz, jointOhm);
+): BuiltElement {
+  if (isPair(element)) return { s: pairPort(element, frequenciesHz, jointOhm), warnings: [] };
   if (isTwoPort(element)) {
-    const leg = twoPort(element, frequenciesHz, jointOhm);
-    return signaling === 'differential' ? pairOfLegs(leg, leg, frequenciesHz.length) : leg;
+    const { s: leg, trappedPoints } = twoPort(element, frequenciesHz, jointOhm);
+    const s = signaling === 'differential' ? pairOfLegs(leg, leg, frequenciesHz.length) : leg;
+    const own = element.kind === 'budget-loss' ? budgetLossWarnings(element, frequenciesHz) : [];
+    return { s, warnings: [...own, ...trappedWarnings(element.kind, trappedPoints)] };
   }
   throw new ElementError({
     path: 'kind',
@@ -71,7 +74,17 @@ function buildCircuit(
   context: BuildContext,
 ): BuiltElement {
   const cascadeInto = context.signaling === 'differential' ? cascade4Into : cascade2Into;
-  const [first, ...rest] = circuit.map((part) => circuitKind(part, frequenciesHz, context));
-  for (const next of rest) cascadeInto(first!, first!, next, frequenciesHz.length);
-  return { s: first!, warnings: [] };
+  const parts = circuit.map((part) => circuitKind(part, frequenciesHz, context));
+  const [first, ...rest] = parts.map(({ s }) => s);
+  let trappedPoints = 0;
+  for (const next of rest) trappedPoints += cascadeInto(first!, first!, next, frequenciesHz.length);
+  const inside = parts.flatMap(({ warnings }, i) => warnings.map((words) => `circuit[${i}]: ${words}`));
+  return { s: first!, warnings: [...inside, ...trappedWarnings('circuit', trappedPoints)] };
+}
+
+/** The cascade takes a wave that neither leaves nor dies as not there (an open beside an open at 0 Hz); a person should know. */
+function trappedWarnings(what: string, points: number): string[] {
+  if (points === 0) return [];
+  const where = points === 1 ? 'at 1 point' : `at ${points} points`;
+  return [`Inside the ${what} a wave is trapped without loss ${where}; it is taken as not there.`];
 }

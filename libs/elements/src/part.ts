@@ -165,22 +165,23 @@ function interpolated(element: PartElement, network: Network, frequenciesHz: Flo
     return interpolate(network, within, { method: element.interpolation, below: element.below });
   } catch (error) {
     if (!(error instanceof NetworkError)) throw error;
-    throw new ElementError({
-      path: error.at === 'frequenciesHz' && beyondEnd(within, network) ? 'above' : 'below',
-      message: error.reason,
-      mend: error.mend,
-    });
+    const path = sideOf(element, network, within);
+    throw new ElementError({ path, message: error.reason, mend: error.mend });
   }
 }
 
-function beyondEnd(wanted: Float64Array, network: Network): boolean {
-  return wanted[wanted.length - 1]! > network.frequenciesHz[network.frequenciesHz.length - 1]!;
+/** The field that says what happens beyond the end that is asked for. */
+function sideOf({ below }: PartElement, { frequenciesHz: data }: Network, wanted: Float64Array) {
+  const above = wanted[wanted.length - 1]! > data[data.length - 1]!;
+  const refusedBelow = below === 'refuse' && wanted[0]! < data[0]!;
+  return above && !refusedBelow ? 'above' : 'below';
 }
 
 /** A grid's end computed by another route may miss the band's end by a rounding: it is that end. */
 function clipped(wanted: Float64Array, data: Float64Array): Float64Array {
   const [first, last] = [data[0]!, data[data.length - 1]!];
-  const near = (f: number, end: number) => f !== end && Math.abs(f - end) <= end * endTolerance;
-  if (wanted.every((f) => !near(f, first) && !near(f, last))) return wanted;
-  return wanted.map((f) => (near(f, first) ? first : near(f, last) ? last : f));
+  const isFirst = (f: number) => f < first && first - f <= first * endTolerance;
+  const isLast = (f: number) => f > last && f - last <= last * endTolerance;
+  if (!wanted.some((f) => isFirst(f) || isLast(f))) return wanted;
+  return wanted.map((f) => (isFirst(f) ? first : isLast(f) ? last : f));
 }

@@ -49,3 +49,6 @@ export interface BuiltElement {
   /** Traces only. */
   readonly line?: LineFacts;
 }
+
+/** Writes one point of a two-port to out[at..at+7]. */
+export type PointWriter = (out: Float64Array, at: number, frequencyHz: number) => void;
