@@ -1,3 +1,3 @@
-export { lineOfField, type FieldLine, type SectionMaterials } from './line-of-field';
+export { dispersionLimitHz, lineOfField, type FieldLine, type SectionMaterials } from './line-of-field';
 export { sectionKey, shapeOf, type FieldSection, type FieldTrace } from './section';
 export { solveSection, type FieldMode, type FieldSolution } from './solve';

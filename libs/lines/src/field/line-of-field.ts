@@ -85,6 +85,15 @@ function filled(
   return out;
 }
 
+function isOuter(section: FieldSection): boolean {
+  return !section.planeAbove && Math.abs(section.traceAtM - shapeOf(section).heightM) < sameHeightM;
+}
+
+/** The frequency to which a microstrip's dispersion is published; null for a section that has none. */
+export function dispersionLimitHz(section: FieldSection): number | null {
+  return isOuter(section) ? (dispersionLimit * speedOfLight) / section.traceAtM : null;
+}
+
 interface Dispersion {
   readonly disperse?: (k: number, quasiStatic: Propagation) => Propagation;
   readonly cautions: readonly string[];
@@ -100,8 +109,7 @@ function dispersionOf(
   frequenciesHz: Float64Array,
 ): Dispersion {
   const heightM = section.traceAtM;
-  const { heightM: topM } = shapeOf(section);
-  const outer = !section.planeAbove && Math.abs(heightM - topM) < sameHeightM;
+  const outer = isOuter(section);
   // Sheets under the trace are capacitances in series.
   const er = heightM / section.sheets.reduce((sum, { thicknessM, dk }) => sum + thicknessM / dk, 0);
   if (!outer || er < leastPermittivity || sheets.length === 0) return { cautions: [] };
@@ -116,9 +124,9 @@ function dispersionOf(
     };
   };
   const topHz = frequenciesHz[frequenciesHz.length - 1] ?? 0;
-  const limitHz = (dispersionLimit * speedOfLight) / heightM;
+  const limitHz = dispersionLimitHz(section);
   const cautions =
-    topHz > limitHz
+    limitHz !== null && topHz > limitHz
       ? [`Above ${limitHz.toPrecision(3)} Hz the dispersion formula leaves its published range.`]
       : [];
   return { disperse, cautions };

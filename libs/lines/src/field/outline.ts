@@ -198,32 +198,53 @@ function maskSurface(shape: Shape, endM: number): Piece[] {
   const bottomM = lowerWidthM / 2 + tM * sin - (cos * tM * (1 - cos)) / sin;
   const topM = lowerWidthM / 2 + tM * sin - (cos * (thickM + tM * (1 - cos))) / sin;
   const [lowM, highM] = [heightM + tM, heightM + thickM + tM];
-  const outer: [number, number][] = [
-    [centreM + topM, highM],
-    [centreM + bottomM, lowM],
-    [endM, lowM],
-  ];
-  const points: [number, number][] =
+  const inner: Corner[] =
     section.gapM === undefined
-      ? [[0, highM], ...outer]
-      : [...innerMask([centreM - bottomM, lowM], [centreM - topM, highM]), ...outer];
+      ? [{ at: [0, highM], crowding: 'end' }]
+      : innerMask(shape, [centreM - bottomM, lowM], [centreM - topM, highM]);
+  // Alone, or with the coats of a pair run into one, the top is cut finer towards its outer end only.
+  const level = inner.at(-1)!.at[0] === centreM;
+  const corners: Corner[] = [
+    ...inner,
+    { at: [centreM + topM, highM], crowding: level ? 'end' : 'both' },
+    { at: [centreM + bottomM, lowM], crowding: 'both' },
+    { at: [endM, lowM], crowding: 'outward' },
+  ];
   const [mask, air] = [section.sheets.length, section.sheets.length + 1];
-  return points.slice(1).map((to, k): Piece => ({
+  const slitM = Math.abs(2 * (centreM - bottomM));
+  return corners.slice(1).map(({ at, crowding }, k): Piece => ({
     surface: surface.between,
-    from: points[k]!,
-    to,
-    crowding: k === points.length - 2 ? 'outward' : k === 0 ? 'end' : 'both',
+    from: corners[k]!.at,
+    to: at,
+    crowding,
     left: air,
     right: mask,
-    nearM: tM,
+    nearM: at[0] < centreM ? Math.min(tM, slitM) : tM,
     firstM: tM / 6,
   }));
 }
 
+/** A point of the mask's outer face, and how the piece that ends there is cut. */
+interface Corner {
+  readonly at: readonly [number, number];
+  readonly crowding: Crowding;
+}
+
 /** The inner half of a pair's mask, from the middle to the top: where the two coats meet, they fill the gap. */
-function innerMask(bottom: [number, number], top: [number, number]): [number, number][] {
-  if (bottom[0] > 0) return [[0, bottom[1]], bottom, top];
-  if (top[0] <= 0) return [[0, top[1]]];
-  const share = -bottom[0] / (top[0] - bottom[0]);
-  return [[0, bottom[1] + share * (top[1] - bottom[1])], top];
+function innerMask(shape: Shape, bottom: Corner['at'], top: Corner['at']): Corner[] {
+  const from = (yM: number): Corner => ({ at: [0, yM], crowding: 'end' });
+  if (bottom[0] > 0) {
+    return [from(bottom[1]), { at: bottom, crowding: 'end' }, { at: top, crowding: 'both' }];
+  }
+  if (top[0] > 0) {
+    const share = -bottom[0] / (top[0] - bottom[0]);
+    return [from(bottom[1] + share * (top[1] - bottom[1])), { at: top, crowding: 'both' }];
+  }
+  // Level from leg to leg: cut where the copper below has its edges.
+  const edgeM = shape.centreM - shape.upperWidthM / 2;
+  return [
+    from(top[1]),
+    { at: [edgeM, top[1]], crowding: 'end' },
+    { at: [shape.centreM, top[1]], crowding: 'start' },
+  ];
 }

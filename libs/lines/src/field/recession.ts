@@ -7,8 +7,8 @@ import { airMatrix, chargeOf, voltages, type Symmetry } from './moments';
 import { conductorsOf, halfWidthAt } from './outline';
 import type { Shape } from './section';
 
-/** A wall's step over the smallest length of the section: slopes are good to its square. */
-const relativeStep = 1e-4;
+/** A wall's step over the smallest length of the section: slopes are good to it. */
+const relativeStep = 2e-5;
 
 /** A mode's charges in air, and what its trace's charge owes to the potential of each segment. */
 interface State {
@@ -35,15 +35,13 @@ export function wallSharesOf(
   const states = symmetries.map((symmetry) => stateOf(mesh, kernel, symmetry));
   const stepM = relativeStep * smallestOf(shape);
   const copies = shape.section.gapM === undefined ? 2 : 1;
+  const before = states.map((state) => chargeOf(mesh, state.density) - owed(state, kernel));
   const slopes = (recede: (shape: Shape, byM: number) => Shape): number[] => {
-    const [out, back] = [stepM, -stepM].map((byM) => {
-      const moved = meshWith(conductorsOf(recede(shape, byM)), cuts);
-      const movedKernel = kernelOf(moved);
-      return states.map((state) => chargeOf(moved, state.density) - owed(state, movedKernel));
-    });
-    return states.map(({ charge }, i) => {
-      const change = (out![i]! - back![i]!) / (2 * stepM);
-      return (-vacuumImpedance * change) / (copies * charge * charge);
+    const moved = meshWith(conductorsOf(recede(shape, stepM)), cuts);
+    const movedKernel = kernelOf(moved);
+    return states.map((state, i) => {
+      const change = chargeOf(moved, state.density) - owed(state, movedKernel) - before[i]!;
+      return (-vacuumImpedance * change) / stepM / (copies * state.charge * state.charge);
     });
   };
   const lower = slopes(recedeLower);

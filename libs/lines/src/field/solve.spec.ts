@@ -6,37 +6,9 @@ import {
   thickAirMicrostrip,
   wheelerStripline,
 } from '../index';
-import { meshOf } from './mesh';
-import { outlineOf } from './outline';
-import { kernelOf } from './kernel';
-import { airCharges, chargeOf } from './moments';
-import { shapeOf, type FieldSection } from './section';
-import { solveSection, type FieldMode } from './solve';
-
-const um = 1e-6;
-const share = (value: number, reference: number) => Math.abs(value / reference - 1);
-
-const strip = (
-  w: number,
-  t: number,
-  below: number,
-  above: number,
-  dk: number,
-  gap?: number,
-): FieldSection => ({
-  sheets: [{ thicknessM: below + t + above, dk }],
-  planeAbove: true,
-  trace: { widthM: w, thicknessM: t },
-  traceAtM: below,
-  gapM: gap,
-});
-const outer = (w: number, t: number, h: number, dk: number, gap?: number): FieldSection => ({
-  sheets: [{ thicknessM: h, dk }],
-  planeAbove: false,
-  trace: { widthM: w, thicknessM: t },
-  traceAtM: h,
-  gapM: gap,
-});
+import type { FieldSection } from './section';
+import { solveSection } from './solve';
+import { copperLossDbPerM, outer, share, strip, um } from './testing/sections';
 
 /** Cross-sections and what a finite-element solution of ours gave for them (Z0, ee, conductor loss dB/m at 10 GHz, smooth). */
 const finiteElements: [string, FieldSection, Record<string, [number, number, number]>][] = [
@@ -68,13 +40,6 @@ const finiteElements: [string, FieldSection, Record<string, [number, number, num
     { even: [68.4362, 3.1466, 11.0787], odd: [47.3873, 2.745, 12.4626] },
   ],
 ];
-
-/** Smooth copper of 5.8e7 S/m at 10 GHz by the incremental inductance rule. */
-function copperLossDbPerM({ shares, z0Ohm }: FieldMode): number {
-  const sum = shares.lower + shares.upper + shares.sides + shares.planeBelow + shares.planeAbove;
-  const sheet = Math.sqrt((Math.PI * 1e10 * 4e-7 * Math.PI) / 5.8e7);
-  return (20 * Math.LOG10E * ((sheet / 376.730313) * sum)) / (2 * z0Ohm);
-}
 
 describe('the field solution against finite elements', () => {
   it.each(finiteElements)(
@@ -171,21 +136,6 @@ describe('the field solution against closed forms at their stated accuracy', () 
   });
 });
 
-describe('the mesh', () => {
-  const section = strip(125 * um, 17.5 * um, 150 * um, 150 * um, 1);
-  const chargeWith = (copper: number) => {
-    const mesh = meshOf(outlineOf(shapeOf(section)), { copper, between: copper, open: 2 * copper });
-    return chargeOf(mesh, airCharges(mesh, kernelOf(mesh), 1));
-  };
-
-  it('converges: each finer one errs less', () => {
-    const exact = chargeWith(48);
-    const errors = [6, 9, 14, 20].map((copper) => share(chargeWith(copper), exact));
-    errors.slice(1).forEach((error, k) => expect(error).toBeLessThan(errors[k]!));
-    expect(errors[0]).toBeLessThan(2e-3);
-  });
-});
-
 describe('a section of another shape', () => {
   it('narrower at its top has a higher impedance, whichever way the foot looks in the middle of a strip line', () => {
     const square = strip(125 * um, 17.5 * um, 150 * um, 150 * um, 3.6);
@@ -204,6 +154,15 @@ describe('a section of another shape', () => {
     const [masked, open] = [tight, bare].map((each) => solveSection(each).modes.odd!);
     expect(masked!.effectivePermittivity).toBeGreaterThan(open!.effectivePermittivity + 0.3);
     expect(masked!.effectivePermittivity).toBeLessThan(3.8);
+  });
+  it('with mask passes smoothly from two coats to one as its gap closes', () => {
+    const odd = (gapM: number) =>
+      solveSection({
+        ...outer(300 * um, 43 * um, 99 * um, 4, gapM),
+        mask: { thicknessM: 23 * um, dk: 3.4 },
+      }).modes.odd!.z0Ohm;
+    expect(share(odd(46.1 * um), odd(45.9 * um))).toBeLessThan(2e-3);
+    expect(odd(46.1 * um)).toBeGreaterThan(odd(45.9 * um));
   });
   it('of two sheets of one permittivity is that of one sheet', () => {
     const one = strip(125 * um, 17.5 * um, 150 * um, 150 * um, 3.6);
