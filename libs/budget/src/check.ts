@@ -1,5 +1,5 @@
 import type { ChannelResponse, CompleteChannel, FieldProblem, Warning } from '@tollgate/contracts';
-import { elementDelayS, elementStanding } from '@tollgate/elements';
+import { elementDelayS, elementModel, elementStanding } from '@tollgate/elements';
 import { commonBand, compileMask, judgeLimit, spokenHz, type Coverage, type Subject } from '@tollgate/masks';
 import { NetworkError, toMixedMode, type Network } from '@tollgate/network';
 import type { CheckCache } from './cache';
@@ -82,6 +82,10 @@ function checked(chain: Chain): Check {
     ledger: ledgersOf(chain, limits, delayS),
     spoils: spoilsOf(chain, limits, delayS),
     lines: linesOf(channel, facts),
+    models: channel.elements.flatMap((element, i) => {
+      const model = ofElement(i, () => elementModel(element, channel.signaling, channel.stackup));
+      return model ? [model] : [];
+    }),
     parts: channel.elements.flatMap(({ id }, i) => {
       const { part } = facts[i]!;
       return part ? [{ element: id, ...part }] : [];

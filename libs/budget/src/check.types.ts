@@ -3,6 +3,7 @@ import type {
   CompleteChannel,
   FieldProblem,
   Ledger,
+  ModelFacts,
   PartFacts,
   Spoils,
   Standing,
@@ -38,6 +39,7 @@ export interface Check {
   readonly ledger: readonly Ledger[];
   readonly spoils: readonly Spoils[];
   readonly lines: ChannelResponse['lines'];
+  readonly models: readonly ModelFacts[];
   readonly parts: readonly PartFacts[];
   readonly standings: readonly ElementStanding[];
   readonly warnings: readonly Warning[];

@@ -18,6 +18,7 @@ export function toResponse(check: Check, fingerprint: string): ChannelResponse {
     mixedModeReferenceOhm: mixedMode ? referencePairs(mixedMode) : [],
     limits: check.limits.map(limitResultOf),
     lines: [...check.lines],
+    models: [...check.models],
     parts: [...check.parts],
     ledger: [...check.ledger],
     spoils: [...check.spoils],

@@ -40,6 +40,7 @@ export function toView(check: Check, fingerprint: string): CheckView {
     limits: channel.limits.map((_, i) => limitViewOf(check, i)),
     ledger: [...check.ledger],
     spoils: [...check.spoils],
+    models: [...check.models],
     parts: [...check.parts],
     warnings: [...check.warnings],
   };

@@ -15,6 +15,7 @@ export * from './channel-file/stackup-rules';
 export { portOrders, type PortOrder, type PortPicks } from './channel-file/touchstone-kind';
 export * from './check/response';
 export * from './check/verdicts';
+export * from './check/model-facts';
 export * from './check/part-facts';
 export * from './check/view';
 export * as api from './api';

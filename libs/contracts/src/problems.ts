@@ -16,12 +16,19 @@ export function formatPath(path: readonly PropertyKey[]): string {
   }, '');
 }
 
-/** Every problem a schema found, each with its own path (a field that is not known is named itself). */
-export function problemsOf(error: z.ZodError): FieldProblem[] {
-  return error.issues.flatMap((issue) => problemsOfIssue(issue, []));
+/**
+ * Every problem a schema found, each with its own path (a field that is not known is named itself) and how to mend it.
+ * @param input what was read: a problem then tells the number or word that stands at its path. Left out for what is secret.
+ */
+export function problemsOf(error: z.ZodError, input?: unknown): FieldProblem[] {
+  return error.issues.flatMap((issue) => problemsOfIssue(issue, [], input));
 }
 
-function problemsOfIssue(issue: z.core.$ZodIssue, base: readonly PropertyKey[]): FieldProblem[] {
+function problemsOfIssue(
+  issue: z.core.$ZodIssue,
+  base: readonly PropertyKey[],
+  input: unknown,
+): FieldProblem[] {
   const path = [...base, ...issue.path];
   if (issue.code === 'unrecognized_keys') {
     return issue.keys.map((key) => ({
@@ -32,11 +39,58 @@ function problemsOfIssue(issue: z.core.$ZodIssue, base: readonly PropertyKey[]):
   }
   if (issue.code === 'invalid_union' && issue.errors.length > 0) {
     const nearest = issue.errors.reduce((best, errors) => (deepest(errors) > deepest(best) ? errors : best));
-    return nearest.flatMap((inner) => problemsOfIssue(inner, path));
+    return nearest.flatMap((inner) => problemsOfIssue(inner, path, input));
   }
-  return [{ path: formatPath(path), message: issue.message }];
+  const mend = ownMend(issue) ?? (input === undefined ? undefined : mendOf(issue));
+  const message = withValue(issue.message, valueAt(input, path));
+  return [{ path: formatPath(path), message, ...(mend === undefined ? {} : { mend }) }];
 }
 
 function deepest(issues: readonly z.core.$ZodIssue[]): number {
   return Math.max(0, ...issues.map((issue) => issue.path.length));
 }
+
+function valueAt(input: unknown, path: readonly PropertyKey[]): unknown {
+  return path.reduce<unknown>(
+    (value, key) =>
+      typeof value === 'object' && value !== null ? (value as Record<PropertyKey, unknown>)[key] : undefined,
+    input,
+  );
+}
+
+const longestShown = 40;
+
+/** "Length must be at least 0." of -1: "Length must be at least 0; -1 is given." A list or an object is not told. */
+function withValue(message: string, value: unknown): string {
+  if (value === undefined || (typeof value === 'object' && value !== null)) return message;
+  const shown = typeof value === 'string' ? JSON.stringify(value) : String(value);
+  if (shown.length > longestShown || message.includes(shown)) return message;
+  return `${message.replace(/\.$/, '')}; ${shown} is given.`;
+}
+
+/** As the schema itself words it: `params.mend` of a custom check. */
+function ownMend(issue: z.core.$ZodIssue): string | undefined {
+  const mend: unknown = issue.code === 'custom' ? issue.params?.['mend'] : undefined;
+  return typeof mend === 'string' ? mend : undefined;
+}
+
+/** By the kind of problem, where the message says what is asked for. */
+function mendOf(issue: z.core.$ZodIssue): string {
+  switch (issue.code) {
+    case 'too_small':
+      return sizeMends[issue.origin]?.more ?? 'Raise it.';
+    case 'too_big':
+      return sizeMends[issue.origin]?.less ?? 'Lower it.';
+    case 'invalid_value':
+      return 'Choose one of what is named.';
+    case 'invalid_type':
+      return 'Give a value of the kind that is asked for.';
+    default:
+      return 'Write it as the message says.';
+  }
+}
+
+const sizeMends: Readonly<Record<string, { more: string; less: string }>> = {
+  string: { more: 'Write it out.', less: 'Shorten it.' },
+  array: { more: 'Add entries.', less: 'Remove entries.' },
+};

@@ -28,7 +28,12 @@ export function quantity(field: QuantityField): z.ZodType<number> {
     .transform((value, context): number => {
       const read = readQuantity(value, field);
       if (typeof read === 'number') return read;
-      context.addIssue({ code: 'custom', message: read.message, input: value });
+      context.addIssue({
+        code: 'custom',
+        message: read.message,
+        input: value,
+        params: { mend: mendOf(field) },
+      });
       return z.NEVER;
     });
   fields.set(schema, field);
@@ -79,11 +84,21 @@ export function quantityField(
   return undefined;
 }
 
-function describe(field: QuantityField): string {
-  const bounds = [
+function mendOf(field: QuantityField): string {
+  const bounds = boundsOf(field);
+  const limits = bounds.length ? `, ${bounds.join(' and ')}` : '';
+  return `Give a finite number in SI, or text such as "1 ${field.unit}"${limits}.`;
+}
+
+function boundsOf(field: QuantityField): string[] {
+  return [
     field.above === undefined ? '' : `more than ${field.above}`,
     field.min === undefined ? '' : `at least ${field.min}`,
     field.max === undefined ? '' : `at most ${field.max}`,
   ].filter(Boolean);
+}
+
+function describe(field: QuantityField): string {
+  const bounds = boundsOf(field);
   return `${field.label}; a number in SI or text with a unit such as "1 ${field.unit}"${bounds.length ? `; ${bounds.join(', ')}` : ''}`;
 }

@@ -1,6 +1,7 @@
 export * from './desk';
 export { buildElement, elementCoverage, elementFiles } from './element';
 export { elementDelayS, elementTollDb } from './loss';
+export { elementModel } from './model-facts';
 export { elementProblems } from './problems';
 export { elementStanding } from './standing';
 export { viaFacts, viaNotchHz, type ViaFacts, type ViaSection } from './via';

@@ -49,10 +49,12 @@ export const grid = z.union([
     .refine((range) => range.stopHz > range.startHz, {
       message: 'The grid must end above its start.',
       path: ['stopHz'],
+      params: { mend: 'Give a stop above the start.' },
     })
     .refine((range) => range.spacing === 'linear' || range.startHz > 0, {
       message: 'A logarithmic grid cannot start at 0 Hz.',
       path: ['startHz'],
+      params: { mend: 'Start above 0 Hz, or space the grid linear.' },
     }),
   z.strictObject({
     frequenciesHz: z
@@ -66,6 +68,7 @@ export const grid = z.union([
             code: 'custom',
             path: [at],
             message: 'Frequencies must ascend, each larger than the one before.',
+            params: { mend: 'Sort them upwards and give each one once.' },
           });
       }),
   }),
@@ -110,7 +113,8 @@ export const channelFile = z
       context.addIssue({
         code: 'custom',
         path: ['referenceOhm'],
-        message: `A ${file.signaling} channel has ${ports} ports: give one reference or ${ports}.`,
+        message: `A ${file.signaling} channel has ${ports} ports; ${file.referenceOhm.length} references are given.`,
+        params: { mend: `Give one reference for all, or ${ports}.` },
       });
     }
   });
@@ -127,6 +131,7 @@ function refuseTwins(list: readonly { id?: string }[], name: string, context: z.
         code: 'custom',
         path: [name, i, 'id'],
         message: `"${entry.id}" is also the id of ${name}[${first}]; an id is unique.`,
+        params: { mend: 'Give another id, or leave it out and one is given.' },
       });
   });
 }

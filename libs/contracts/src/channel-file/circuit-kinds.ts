@@ -26,7 +26,10 @@ export const branchFields = {
   capacitanceF: field.seriesCapacitance().optional(),
 };
 
-const noPart = 'Name at least one part: a resistance, an inductance or a capacitance.';
+const noPart = {
+  message: 'There is no part: a resistance, an inductance or a capacitance.',
+  params: { mend: 'Give resistanceOhm, inductanceH or capacitanceF; 0 ohm is a short.' },
+};
 function namesAPart(branch: {
   resistanceOhm?: number;
   inductanceH?: number;
@@ -79,6 +82,7 @@ export const stubElement = z
   .refine((stub) => (stub.end === 'load') === (stub.load !== undefined), {
     message: 'A load is given exactly where the stub ends in a load.',
     path: ['load'],
+    params: { mend: 'Give the load of a stub with end "load"; leave it out of the others.' },
   });
 
 export const teeElement = z.strictObject({
@@ -144,6 +148,7 @@ export const pairSeriesElement = z
   .refine((pair) => pair.mutualInductanceH <= pair.inductanceH, {
     message: 'The mutual inductance can be no larger than the inductance of a leg.',
     path: ['mutualInductanceH'],
+    params: { mend: 'Give no more than inductanceH.' },
   });
 
 export const pairShuntElement = z.strictObject({

@@ -37,20 +37,21 @@ export const segment = z
   .refine((part) => part.toHz > part.fromHz, {
     message: 'The segment must end above its start.',
     path: ['toHz'],
+    params: { mend: 'Give an end above fromHz.' },
   });
 
 const maskPoints = z
   .array(z.tuple([field.frequency('Frequency'), bound], 'A point is [frequency, dB].'))
   .min(2, 'A mask of points has at least two.')
   .max(bounds.maskPoints, `A mask has at most ${bounds.maskPoints} points.`)
-  .refine(
-    (points) => points.every((point, i) => i === 0 || point[0] >= points[i - 1]![0]),
-    'The points must ascend in frequency.',
-  )
-  .refine(
-    (points) => points.every((point, i) => i < 2 || point[0] > points[i - 2]![0]),
-    'At most two points may share a frequency (a step).',
-  );
+  .refine((points) => points.every((point, i) => i === 0 || point[0] >= points[i - 1]![0]), {
+    message: 'The points must ascend in frequency.',
+    params: { mend: 'Sort the points upwards.' },
+  })
+  .refine((points) => points.every((point, i) => i < 2 || point[0] > points[i - 2]![0]), {
+    message: 'At most two points may share a frequency (a step).',
+    params: { mend: 'Remove points between the two sides of the step.' },
+  });
 
 const test = line('Test point', 80);
 
@@ -102,27 +103,31 @@ export const limit = z
       context.addIssue({
         code: 'custom',
         path: [],
-        message: 'Give the limit as exactly one of: segments, points, or atHz with db.',
+        message: `The limit is given in ${forms.length} ways; it needs exactly one.`,
+        params: { mend: 'Give one of: segments, points, or atHz with db.' },
       });
     } else if ((value.atHz === undefined) !== (value.db === undefined)) {
       context.addIssue({
         code: 'custom',
         path: [value.atHz === undefined ? 'atHz' : 'db'],
         message: 'A single value needs both atHz and db.',
+        params: { mend: 'Give the one that is missing.' },
       });
     }
     if (value.points && value.interpolation === undefined) {
       context.addIssue({
         code: 'custom',
         path: ['interpolation'],
-        message: 'Say how the points are joined: linear or log in frequency.',
+        message: 'It is not said how the points are joined.',
+        params: { mend: 'Give interpolation: linear or log (in frequency).' },
       });
     }
     if (value.quantity === 'mode-conversion' && value.parameter === undefined) {
       context.addIssue({
         code: 'custom',
         path: ['parameter'],
-        message: 'Name the mixed-mode parameter, such as SCD21.',
+        message: 'A limit on mode conversion names its parameter.',
+        params: { mend: 'Name the mixed-mode parameter, such as SCD21.' },
       });
     }
     if (
@@ -132,7 +137,8 @@ export const limit = z
       context.addIssue({
         code: 'custom',
         path: ['fit'],
-        message: 'Say how the loss is fitted: basis, fromHz and toHz.',
+        message: 'It is not said how the loss is fitted.',
+        params: { mend: 'Give fit: basis, fromHz and toHz.' },
       });
     }
   });

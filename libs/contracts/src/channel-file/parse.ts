@@ -13,7 +13,7 @@ export function parseChannelFile(document: unknown): ParsedChannel {
   const parsed = channelFile.safeParse(document);
   return parsed.success
     ? { ok: true, channel: withIds(parsed.data) }
-    : { ok: false, problems: problemsOf(parsed.error).slice(0, 100) };
+    : { ok: false, problems: problemsOf(parsed.error, document).slice(0, 100) };
 }
 
 /** Reads the text of a channel file; a JSON error is told with its place. */

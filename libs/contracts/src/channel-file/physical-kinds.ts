@@ -32,8 +32,9 @@ export const traceElement = z
     gapToleranceM: field.length('Gap tolerance').optional(),
   })
   .refine((trace) => trace.lengthM !== undefined || trace.path !== undefined, {
-    message: 'Give a length or a path.',
+    message: 'The trace has neither a length nor a path.',
     path: ['lengthM'],
+    params: { mend: 'Give lengthM or path.' },
   });
 
 export const viaElement = z.strictObject({

@@ -11,7 +11,7 @@ export type ParsedStackup =
 /** Shape, bounds and units of a stackup, and what holds for each layer by itself; the result is in SI. */
 export function parseStackup(document: unknown): ParsedStackup {
   const parsed = stackup.safeParse(document);
-  if (!parsed.success) return { ok: false, problems: problemsOf(parsed.error).slice(0, 100) };
+  if (!parsed.success) return { ok: false, problems: problemsOf(parsed.error, document).slice(0, 100) };
   const { layers } = parsed.data;
   if (!layers || layers.length === 0) return { ok: false, problems: [withoutLayers] };
   const problems = layerProblems(layers);

@@ -34,6 +34,7 @@ const roughness = z
   .refine((face) => face.model === 'none' || (face.rqM === undefined) !== (face.rzM === undefined), {
     message: 'A roughness model takes exactly one of rqM and rzM.',
     path: ['rqM'],
+    params: { mend: 'Give the one that the model is made for, and leave out the other.' },
   });
 
 const copper = z.strictObject({

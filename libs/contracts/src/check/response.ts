@@ -1,4 +1,5 @@
 import * as z from 'zod';
+import { modelFacts } from './model-facts';
 import { partFacts } from './part-facts';
 import { limitVerdicts } from './verdicts';
 
@@ -94,6 +95,8 @@ export const channelResponse = z.object({
   mixedModeReferenceOhm: z.array(complexNumber),
   limits: z.array(limitResult),
   lines: z.array(lineResult),
+  /** An entry for each trace and via. */
+  models: z.array(modelFacts),
   /** An entry for each element that is a file. */
   parts: z.array(partFacts),
   ledger: z.array(ledger),

@@ -1,6 +1,7 @@
 import * as z from 'zod';
 import { limitQuantities, limitStatuses } from '../channel-file/limits';
 import { standings } from '../channel-file/common';
+import { modelFacts } from './model-facts';
 import { partFacts } from './part-facts';
 import { ledger, limitResult, spoils } from './response';
 import { channelVerdict } from './verdicts';
@@ -59,6 +60,7 @@ export const checkView = z.object({
   limits: z.array(limitView),
   ledger: z.array(ledger),
   spoils: z.array(spoils),
+  models: z.array(modelFacts),
   parts: z.array(partFacts),
   warnings: z.array(warning),
 });

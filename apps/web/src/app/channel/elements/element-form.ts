@@ -10,6 +10,7 @@ import { TextEntry } from '../entries/text-entry';
 import { BoardFields } from './board-fields';
 import { CircuitEditor } from './circuit-editor';
 import { ElementQuantities } from './element-quantities';
+import { ModelNote } from './model-note';
 import { PartFields } from './part-fields';
 
 const allotmentField = { dimension: 'loss', label: 'Allotted', unit: 'dB', min: 0, max: 1000 } as const;
@@ -17,7 +18,16 @@ const allotmentField = { dimension: 'loss', label: 'Allotted', unit: 'dB', min: 
 /** Everything about the selected element: its quantities, where they come from, what the budget gave it. */
 @Component({
   selector: 'tg-element-form',
-  imports: [BoardFields, CircuitEditor, ElementQuantities, PartFields, PickEntry, QuantityEntry, TextEntry],
+  imports: [
+    BoardFields,
+    CircuitEditor,
+    ElementQuantities,
+    ModelNote,
+    PartFields,
+    PickEntry,
+    QuantityEntry,
+    TextEntry,
+  ],
   changeDetection: ChangeDetectionStrategy.OnPush,
   templateUrl: './element-form.html',
   styleUrl: './element-form.scss',
