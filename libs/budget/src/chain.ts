@@ -97,7 +97,7 @@ function keyOf(element: ChannelElement, { parts }: BuildContext, stackup: string
     'file' in element || 'fileId' in element
       ? (parts.get(element.file ?? element.fileId ?? '')?.sha256 ?? '')
       : '';
-  const onStackup = element.kind === 'trace' || element.kind === 'via';
+  const onStackup = ['trace', 'via', 'capacitor'].includes(element.kind);
   return `${canonicalize(model)} ${part} ${onStackup ? stackup : ''}`;
 }
 

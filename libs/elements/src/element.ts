@@ -4,7 +4,7 @@ import { budgetLossWarnings } from './budget-loss';
 import { pairOfLegs } from './legs';
 import { isPair, pairPort } from './pair';
 import { buildPart, partCoverage, partKey } from './part';
-import { buildTrace } from './trace';
+import { buildTrace, padsInto } from './trace';
 import { isTwoPort, twoPort } from './two-port';
 import { ElementError, type BuildContext, type BuiltElement, type ElementCoverage } from './types';
 import { buildVia } from './via';
@@ -52,14 +52,17 @@ export function buildElement(
 function circuitKind(
   element: ChannelElement,
   frequenciesHz: Float64Array,
-  { signaling, jointOhm }: BuildContext,
+  context: BuildContext,
 ): BuiltElement {
+  const { signaling, jointOhm } = context;
   if (isPair(element)) return { s: pairPort(element, frequenciesHz, jointOhm), warnings: [] };
   if (isTwoPort(element)) {
     const { s: leg, trappedPoints } = twoPort(element, frequenciesHz, jointOhm);
+    const trapped =
+      trappedPoints + (element.kind === 'capacitor' ? padsInto(leg, element, frequenciesHz, context) : 0);
     const s = signaling === 'differential' ? pairOfLegs(leg, leg, frequenciesHz.length) : leg;
     const own = element.kind === 'budget-loss' ? budgetLossWarnings(element, frequenciesHz) : [];
-    return { s, warnings: [...own, ...trappedWarnings(element.kind, trappedPoints)] };
+    return { s, warnings: [...own, ...trappedWarnings(element.kind, trapped)] };
   }
   throw new ElementError({
     path: 'kind',

@@ -1,6 +1,6 @@
 import { kindDescription, type ChannelElement, type Signaling, type Stackup } from '@tollgate/contracts';
 import type { PartElement } from './part';
-import { traceProblems } from './trace';
+import { padProblems, traceProblems } from './trace';
 import type { ElementProblem } from './types';
 import { viaProblems } from './via';
 
@@ -25,6 +25,8 @@ export function elementProblems(
       return traceProblems(element, signaling, stackup);
     case 'via':
       return viaProblems(element, signaling, stackup);
+    case 'capacitor':
+      return padProblems(element, stackup);
     case 'touchstone':
       return fileProblems(element);
     case 'connector':

@@ -46,7 +46,8 @@ type Trace = Extract<ChannelElement, { kind: 'trace' }>;
 /** The tolerances that a channel's stackup and traces state; only of layers that its traces and vias can meet. */
 export function tolerancesOf(channel: CompleteChannel): Tolerance[] {
   const layers = channel.stackup?.layers ?? [];
-  if (!channel.elements.some(({ kind }) => kind === 'trace' || kind === 'via')) return [];
+  const onStackup = ['trace', 'via', 'capacitor'];
+  if (!channel.elements.some(({ kind }) => onStackup.includes(kind))) return [];
   const found: Tolerance[] = layers.flatMap((layer) => {
     const quantities: [TolerancedQuantity, number | undefined][] =
       layer.kind === 'copper'

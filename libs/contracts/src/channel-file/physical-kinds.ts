@@ -74,4 +74,12 @@ export const capacitorElement = z.strictObject({
   seriesInductanceH: field.inductance('Series inductance'),
   seriesResistanceOhm: field.resistance('Series resistance'),
   padCapacitanceF: field.capacitance('Pad capacitance'),
+  /** The pads as copper: each is solved as a short wide trace beside the capacitance stated. */
+  pads: z
+    .strictObject({
+      layer: layerName,
+      widthM: field.length('Pad width', { above: 0, max: 0.02 }),
+      lengthM: field.length('Pad length', { above: 0, max: 0.02 }),
+    })
+    .optional(),
 });

@@ -14,7 +14,7 @@ import {
 } from '../types';
 import { legLengths } from './legs-of-path';
 import { fieldOf, solveTrace } from './field-model';
-import { sectionOf } from './section';
+import { sectionOf, type TraceSection } from './section';
 
 type Trace = ElementOf<'trace'>;
 
@@ -76,7 +76,7 @@ function problemOfLine({ at, reason, mend }: LineError): ElementProblem {
 }
 
 /** Runs what may meet a section without a model. */
-function ofLine<Result>(run: () => Result): Result {
+export function ofLine<Result>(run: () => Result): Result {
   try {
     return run();
   } catch (error) {
@@ -108,6 +108,20 @@ export function buildTrace(trace: Trace, frequenciesHz: Float64Array, context: B
     cascade4Into(s, s, pairOfLegs(legs[0]!, legs[1]!, points), points);
   }
   return { s, warnings, line };
+}
+
+/**
+ * S of a single trace of a section and a length.
+ * @throws ElementError
+ */
+export function singleTrace(
+  section: TraceSection,
+  lengthM: number,
+  frequenciesHz: Float64Array,
+  jointOhm: number,
+): Float64Array {
+  const { modes } = ofLine(() => solveTrace(section, frequenciesHz));
+  return uniformLine(modes.single!, lengthM, frequenciesHz, jointOhm);
 }
 
 function uniformLine(

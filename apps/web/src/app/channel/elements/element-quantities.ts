@@ -21,6 +21,7 @@ const branchTitles: Readonly<Record<string, string>> = {
   evenLoss: 'Even-mode loss',
   oddLoss: 'Odd-mode loss',
   backdrill: 'Backdrill',
+  pads: 'Pads, as copper',
 };
 
 const endPicks = [
