@@ -3,6 +3,7 @@ import { recordMigrations } from './202606010900-record';
 import { peopleMigrations } from './202606010910-people';
 import { boardMigrations } from './202606010920-boards';
 import { channelMigrations } from './202606010930-channels';
+import { outlineMigrations } from './202612011430-outlines';
 import { stackupMigrations } from './202612011400-stackups';
 
 /** Every step in order. A static list survives bundling; a step once released is never edited, only followed. */
@@ -12,4 +13,5 @@ export const migrations: readonly Migration[] = [
   ...boardMigrations,
   ...channelMigrations,
   ...stackupMigrations,
+  ...outlineMigrations,
 ];

@@ -3,6 +3,7 @@ export const bounds = {
   gridPoints: { min: 2, max: 20_001 },
   elements: { min: 1, max: 500 },
   pathVertices: 1_000,
+  outlineCorners: 500,
   limits: 50,
   segments: 50,
   maskPoints: 1_000,

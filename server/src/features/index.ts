@@ -19,6 +19,7 @@ import {
   createDraftEvents,
   createExchangeService,
   createResolveChannel,
+  planRoutes,
 } from './channels';
 import { CheckPool, createChecksRepository } from './checks';
 import { demoMailRoutes } from './demo-mail';
@@ -129,6 +130,7 @@ export function createFeatures(config: Config, clock: Clock, sequelize: Sequeliz
     ...revisionRoutes(boards, boardRows),
     ...fileRoutes(files),
     ...channelRoutes({ channels, exchange, repository: channelRows, boards: boardRows }),
+    ...planRoutes(channelRows, boardRows),
     ...stackupRoutes({ stackups, use, desk, repository: stackupRows, boards: boardRows }),
     ...sheetRoutes({ config, clock, channels, boardOf: (channelId) => channelRows.boardOf(channelId) }),
     ...streamRoutes(feed, boardRows.isMember),

@@ -1,4 +1,6 @@
 import * as z from 'zod';
+import { bounds } from '../bounds';
+import { vertex } from '../channel-file/physical-kinds';
 import { line } from '../text';
 import { can, day, id, instant, list, role } from './common';
 
@@ -61,6 +63,15 @@ export const boardChange = z.strictObject({
   archived: z.boolean().optional(),
 });
 
+/** The edge of the board as a closed polygon, seen from above: x to the right, y downwards. */
+export const boardOutline = z.strictObject({
+  cornersM: z
+    .array(vertex)
+    .min(3, 'An outline has at least three corners.')
+    .max(bounds.outlineCorners, `An outline has at most ${bounds.outlineCorners} corners.`),
+});
+export type BoardOutline = z.output<typeof boardOutline>;
+
 const letter = z
   .string()
   .trim()
@@ -77,6 +88,8 @@ export const revisionCreate = z.strictObject({
 });
 export const revisionChange = z.strictObject({
   releaseOn: day.nullable().optional(),
+  /** Null takes it away. */
+  outline: boardOutline.nullable().optional(),
   archived: z.boolean().optional(),
 });
 
@@ -95,6 +108,7 @@ export const revision = z.object({
   letter: z.string(),
   releaseOn: day.nullable(),
   archived: z.boolean(),
+  outline: boardOutline.nullable(),
   links: z.array(link),
   siblings: z.array(z.object({ id, letter: z.string() })),
   can: can('change', 'changeLinks', 'createChannels', 'uploadFiles'),

@@ -3,6 +3,7 @@ export * from './channels';
 export * from './common';
 export * from './masks';
 export * from './people';
+export * from './plan';
 export * from './problem';
 export * from './session';
 export * from './stackups';

@@ -23,6 +23,8 @@ export interface RevisionRow {
   releaseOn: string | null;
   archived: boolean;
   copiedFrom: string | null;
+  /** BoardOutline as JSON. */
+  outline: string | null;
   createdAt: Date;
 }
 
@@ -62,6 +64,7 @@ export function defineBoards(sequelize: Sequelize): BoardModels {
       releaseOn: column.day,
       archived: column.flag,
       copiedFrom: column.reference,
+      outline: column.longText,
       createdAt: column.instant,
     }),
     links: sequelize.define('links', {

@@ -1,6 +1,7 @@
 import {
   roleAllows,
   type Board,
+  type BoardOutline,
   type BoardSummary,
   type Link,
   type Member,
@@ -83,6 +84,7 @@ export function presentRevision(
     letter: row.letter,
     releaseOn: row.releaseOn,
     archived: row.archived,
+    outline: row.outline === null ? null : (JSON.parse(row.outline) as BoardOutline),
     links: links.map(presentLink),
     siblings: siblings.map(({ id, letter }) => ({ id, letter })),
     can: {

@@ -1,5 +1,6 @@
 import { randomUUID } from 'node:crypto';
-import type { Board, BoardSummary, Link, Revision } from '@tollgate/contracts';
+import type { Board, BoardOutline, BoardSummary, Link, Revision } from '@tollgate/contracts';
+import { crossingSides } from '@tollgate/geometry';
 import { actorOf, problems, type Caller } from '../../platform/http';
 import type { UnitOfWork, Work } from '../../platform/work';
 import type { PeopleService } from '../people';
@@ -110,6 +111,7 @@ export function createBoardsService({ repository, people, unitOfWork, copyChanne
           releaseOn: null,
           archived: false,
           copiedFrom: null,
+          outline: null,
           createdAt: work.at,
         });
         work.event({
@@ -198,6 +200,7 @@ export function createBoardsService({ repository, people, unitOfWork, copyChanne
           ]);
         }
         const source = siblings.find((row) => row.id === input.copyFrom);
+        const before = source ?? siblings.at(-1);
         if (input.copyFrom && !source)
           throw problems.unprocessable([
             { path: 'copyFrom', message: 'This revision is not of this board.' },
@@ -209,10 +212,10 @@ export function createBoardsService({ repository, people, unitOfWork, copyChanne
           releaseOn: input.releaseOn ?? null,
           archived: false,
           copiedFrom: source?.id ?? null,
+          outline: before?.outline ?? null,
           createdAt: work.at,
         };
         await repository.insertRevision(work, row);
-        const before = source ?? siblings.at(-1);
         if (before) await startStackup(work, before, row);
         if (source) await copyInto(work, source, row);
         work.event({
@@ -231,8 +234,11 @@ export function createBoardsService({ repository, people, unitOfWork, copyChanne
       caller: Caller,
       revisionId: string,
       boardId: string,
-      change: { releaseOn?: string | null; archived?: boolean },
+      { outline, ...rest }: { releaseOn?: string | null; archived?: boolean; outline?: BoardOutline | null },
     ): Promise<Revision> {
+      if (outline) refuseCrossing(outline);
+      const drawn = outline === undefined ? {} : { outline: outline && JSON.stringify(outline) };
+      const change = { ...rest, ...drawn };
       await unitOfWork(actorOf(caller), async (work) => {
         const before = (await repository.revision(revisionId, work.transaction))!;
         await repository.updateRevision(work, revisionId, change);
@@ -241,7 +247,7 @@ export function createBoardsService({ repository, people, unitOfWork, copyChanne
           what: 'revision.changed',
           subject: revisionId,
           boardId,
-          from: { releaseOn, archived },
+          from: { releaseOn, archived, ...(outline === undefined ? {} : { outline: before.outline }) },
           to: change,
           detail: `Revision ${before.letter} changed`,
         });
@@ -288,4 +294,16 @@ export function createBoardsService({ repository, people, unitOfWork, copyChanne
       return presentLink((await repository.link(linkId))!);
     },
   };
+}
+
+function refuseCrossing({ cornersM }: BoardOutline): void {
+  const sides = crossingSides(cornersM);
+  if (!sides) return;
+  const [one, other] = sides.map((side) => side + 1);
+  throw problems.unprocessable([
+    {
+      path: 'outline.cornersM',
+      message: `The outline crosses itself: the side from corner ${one} meets the side from corner ${other}.`,
+    },
+  ]);
 }

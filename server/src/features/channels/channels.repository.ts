@@ -87,6 +87,16 @@ export function createChannelsRepository(sequelize: Sequelize) {
       return rows.map((row) => row.get());
     },
 
+    /** The documents of what is not archived, by name. */
+    async drawn(revisionId: string): Promise<Pick<ChannelRow, 'id' | 'name' | 'document'>[]> {
+      const rows = await channels.findAll({
+        attributes: ['id', 'name', 'document'],
+        where: { revisionId, archived: false },
+        order: [['name', 'ASC']],
+      });
+      return rows.map((row) => row.get());
+    },
+
     async outOfDate(): Promise<string[]> {
       const rows = await channels.findAll({ attributes: ['id'], where: { outOfDate: true } });
       return rows.map((row) => row.get().id);

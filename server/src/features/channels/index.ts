@@ -1,3 +1,4 @@
+export { planRoutes } from './plan.routes';
 export { channelRoutes } from './channels.routes';
 export { createChannelsRepository, type ChannelsRepository } from './channels.repository';
 export { createChannelsService, type ChannelsService, type FollowStackup } from './channels.service';
