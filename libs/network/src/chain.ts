@@ -38,9 +38,13 @@ export function cascadeAll(
   points: number,
   out: Float64Array = new Float64Array(points * ports * ports * 2),
 ): Float64Array {
-  const [first, ...rest] = sections;
-  out.set(first ?? through(ports, points));
-  for (const section of rest) cascadeInto(out, out, section, ports, points);
+  const [first, second] = sections;
+  if (!first || !second) {
+    out.set(first ?? through(ports, points));
+    return out;
+  }
+  cascadeInto(out, first, second, ports, points);
+  for (let k = 2; k < sections.length; k++) cascadeInto(out, out, sections[k]!, ports, points);
   return out;
 }
 
