@@ -60,11 +60,17 @@ function valueAt(input: unknown, path: readonly PropertyKey[]): unknown {
 
 const longestShown = 40;
 
+function isScalar(value: unknown): value is string | number | boolean | null {
+  return value === null || ['string', 'number', 'boolean'].includes(typeof value);
+}
+
 /** "Length must be at least 0." of -1: "Length must be at least 0; -1 is given." A list or an object is not told. */
 function withValue(message: string, value: unknown): string {
-  if (value === undefined || (typeof value === 'object' && value !== null)) return message;
-  const shown = typeof value === 'string' ? JSON.stringify(value) : String(value);
-  if (shown.length > longestShown || message.includes(shown)) return message;
+  if (!isScalar(value)) return message;
+  const text = typeof value === 'string';
+  const shown = text ? JSON.stringify(value) : String(value);
+  // The message may have quoted a word already.
+  if (shown.length > longestShown || (text && message.includes(shown))) return message;
   return `${message.replace(/\.$/, '')}; ${shown} is given.`;
 }
 

@@ -87,7 +87,7 @@ export function quantityField(
 function mendOf(field: QuantityField): string {
   const bounds = boundsOf(field);
   const limits = bounds.length ? `, ${bounds.join(' and ')}` : '';
-  return `Give a finite number in SI, or text such as "1 ${field.unit}"${limits}.`;
+  return `Give a finite number in SI, or text such as "${`1 ${field.unit}`.trim()}"${limits}.`;
 }
 
 function boundsOf(field: QuantityField): string[] {
