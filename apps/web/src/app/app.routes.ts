@@ -32,6 +32,12 @@ export const routes: Routes = [
     loadChildren: () => import('./boards/boards.routes').then((file) => file.boardsRoutes),
   },
   {
+    path: 'revisions/:revisionId/stackup',
+    title: titles.stackup,
+    canActivate: [signedInOnly],
+    loadChildren: () => import('./stackup/stackup.routes').then((file) => file.stackupRoutes),
+  },
+  {
     path: 'revisions/:revisionId',
     title: titles.revision,
     canActivate: [signedInOnly],

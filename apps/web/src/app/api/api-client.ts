@@ -16,8 +16,9 @@ export class ApiClient {
     return this.http.get<Reply>(address(path), { params: query });
   }
 
-  post<Reply>(path: string, body: unknown = {}): Observable<Reply> {
-    return this.http.post<Reply>(address(path), body);
+  /** `version`, where it is given, goes as If-Match. */
+  post<Reply>(path: string, body: unknown = {}, version?: number): Observable<Reply> {
+    return this.http.post<Reply>(address(path), body, { headers: ifMatch(version) });
   }
 
   patch<Reply>(path: string, body: unknown): Observable<Reply> {
@@ -26,8 +27,7 @@ export class ApiClient {
 
   /** `version` goes as If-Match: a 412 problem carries what is stored now as `current`. */
   put<Reply>(path: string, body: unknown, version?: number): Observable<Reply> {
-    const headers: Record<string, string> = version === undefined ? {} : { 'If-Match': `"${version}"` };
-    return this.http.put<Reply>(address(path), body, { headers });
+    return this.http.put<Reply>(address(path), body, { headers: ifMatch(version) });
   }
 
   delete<Reply = void>(path: string): Observable<Reply> {
@@ -54,6 +54,10 @@ export function downloadName(headers: HttpHeaders, otherwise: string): string {
   const encoded = /filename\*=UTF-8''([^;]+)/i.exec(disposition)?.[1];
   if (encoded) return decodeURIComponent(encoded);
   return /filename="([^"]+)"/i.exec(disposition)?.[1] ?? otherwise;
+}
+
+function ifMatch(version: number | undefined): Record<string, string> {
+  return version === undefined ? {} : { 'If-Match': `"${version}"` };
 }
 
 function address(path: string): string {

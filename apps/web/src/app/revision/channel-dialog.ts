@@ -2,7 +2,14 @@ import { ChangeDetectionStrategy, Component, inject } from '@angular/core';
 import { ReactiveFormsModule } from '@angular/forms';
 import { MatButton } from '@angular/material/button';
 import { MAT_DIALOG_DATA, MatDialogModule, MatDialogRef } from '@angular/material/dialog';
-import { signalings, type Channel, type Revision } from '@tollgate/contracts';
+import {
+  signalings,
+  type Channel,
+  type Revision,
+  type StackupVersion,
+  type StackupVersions,
+} from '@tollgate/contracts';
+import { of, switchMap, type Observable } from 'rxjs';
 import * as z from 'zod';
 import { ApiClient } from '../api/api-client';
 import { ChoiceField } from '../forms/choice-field';
@@ -53,12 +60,26 @@ export class ChannelDialog {
     this.submission.send(
       () => {
         const { name, signaling, linkId } = requestOf(schema, this.form);
-        return this.api.post<Channel>(`/revisions/${this.revision.id}/channels`, {
-          document: startDocument(name, signaling),
-          linkId: linkId || null,
-        });
+        return this.newestStackup().pipe(
+          switchMap((newest) =>
+            this.api.post<Channel>(`/revisions/${this.revision.id}/channels`, {
+              document: startDocument(name, signaling, newest),
+              linkId: linkId || null,
+            }),
+          ),
+        );
       },
       (made) => this.ref.close(made),
     );
+  }
+
+  private newestStackup(): Observable<StackupVersion | undefined> {
+    return this.api
+      .get<StackupVersions>(`/revisions/${this.revision.id}/stackups`)
+      .pipe(
+        switchMap(({ items: [newest] }) =>
+          newest ? this.api.get<StackupVersion>(`/stackups/${newest.id}`) : of(undefined),
+        ),
+      );
   }
 }

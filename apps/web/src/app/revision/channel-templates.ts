@@ -1,7 +1,17 @@
-import { channelFormat, newElement, type ChannelFile, type Signaling } from '@tollgate/contracts';
+import {
+  channelFormat,
+  newElement,
+  type ChannelFile,
+  type Signaling,
+  type StackupVersion,
+} from '@tollgate/contracts';
 
-/** What a new channel starts from: one line, no limit yet. */
-export function startDocument(name: string, signaling: Signaling): ChannelFile {
+/** What a new channel starts from: one line, no limit yet, on the revision's newest stackup where it has one. */
+export function startDocument(
+  name: string,
+  signaling: Signaling,
+  newest: StackupVersion | undefined,
+): ChannelFile {
   const kind = signaling === 'differential' ? 'coupled-line' : 'line';
   return {
     format: channelFormat,
@@ -11,5 +21,6 @@ export function startDocument(name: string, signaling: Signaling): ChannelFile {
     symbolRateBd: 25.78125e9,
     elements: [newElement(kind, signaling)],
     limits: [],
+    ...(newest ? { stackup: newest.document, library: { stackupVersion: newest.id } } : {}),
   };
 }
