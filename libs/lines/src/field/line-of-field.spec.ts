@@ -57,6 +57,41 @@ describe('a line from a field solution', () => {
     });
   });
 
+  it('by its filling agrees with a new solution at the permittivities of each frequency, far from where it was solved', () => {
+    const section: FieldSection = {
+      sheets: [{ thicknessM: 100 * um, dk: 4.2 }],
+      planeAbove: false,
+      trace: { widthM: 120 * um, thicknessM: 35 * um },
+      traceAtM: 100 * um,
+      gapM: 120 * um,
+      mask: { thicknessM: 20 * um, dk: 3.4 },
+    };
+    const materials = { sheets: [laminate(4.2, 0.02)], mask: laminate(3.4, 0.028), conductor: smooth };
+    const f = Float64Array.of(1e6, 5e10);
+    const [sheet, mask] = [materials.sheets[0]!, materials.mask].map((material) => permittivity(material, f));
+    const { modes } = lineOfField(solveSection(section), section, materials, f);
+    f.forEach((_, k) => {
+      const solved = solveSection({
+        ...section,
+        sheets: [{ thicknessM: 100 * um, dk: sheet![2 * k]! }],
+        mask: { thicknessM: 20 * um, dk: mask![2 * k]! },
+      });
+      for (const name of ['even', 'odd'] as const) {
+        const { effectivePermittivity: ee, filling } = solved.modes[name]!;
+        const dielectricLoss = filling[0]! * sheet![2 * k + 1]! + filling[1]! * mask![2 * k + 1]!;
+        const line = modes[name]!;
+        // Capacitance over that of the air line, whose C is 1/(Zair c); conductance over susceptance. Dispersion leaves their ratio.
+        const tangent = line.shuntSPerM[2 * k]! / line.shuntSPerM[2 * k + 1]!;
+        expect(Math.abs(tangent / (dielectricLoss / ee) - 1)).toBeLessThan(0.01);
+        if (k === 0) {
+          const air = solved.modes[name]!.airOhm;
+          const filledEe = (line.shuntSPerM[1]! / (2 * Math.PI * f[0]!)) * air * c0;
+          expect(Math.abs(filledEe / ee - 1)).toBeLessThan(5e-4);
+        }
+      }
+    });
+  });
+
   /** Relative permittivity of ee at some frequencies of the measured board, 100 mm of loss (difference of two lines). */
   const measured: readonly [hz: number, ee: number, lossDb: number][] = [
     [0.5e9, 3.34512, 0.13545],
@@ -94,6 +129,26 @@ describe('a line from a field solution', () => {
     const materials = { sheets: [laminate(4.4, 0.02, 'constant')], conductor: smooth };
     const { cautions } = lineOfField(solveSection(section), section, materials, Float64Array.of(1e9, 4e10));
     expect(cautions).toEqual([expect.stringContaining('not causal'), expect.stringContaining('2.51e+10 Hz')]);
+  });
+});
+
+describe('a dielectric of several points', () => {
+  const f = Float64Array.of(1e9);
+  const lossAndCautions = (furtherPoints: Dielectric['furtherPoints']) => {
+    const materials = { sheets: [{ ...laminate(3.7, 0.01), furtherPoints }], conductor: smooth };
+    const { modes, cautions } = lineOfField(solveSection(strip), strip, materials, f);
+    return { loss: modes.single!.dielectricLossDbPerM[0]!, cautions };
+  };
+  it('loses as its model fitted to all of them says', () => {
+    const [one, two] = [undefined, [{ dk: 3.66, df: 0.012, atHz: 1e10 }]].map(lossAndCautions);
+    expect(two!.loss / one!.loss).toBeGreaterThan(1.04);
+    expect(two!.loss / one!.loss).toBeLessThan(1.14);
+  });
+  it('says so where the model misses them, and nothing where it meets them', () => {
+    expect(lossAndCautions([{ dk: 3.62, df: 0.02, atHz: 1e10 }]).cautions).toEqual([
+      expect.stringMatching(/misses them by up to \d\.\d % in Dk, \d\d\.\d % in Df/),
+    ]);
+    expect(lossAndCautions([{ dk: 3.645, df: 0.0102, atHz: 1e10 }]).cautions).toEqual([]);
   });
 });
 
@@ -136,6 +191,39 @@ describe('a causal line', () => {
       // Differences of slowness, against a slowness of 6.4 ns/m: what dispersion there is, to a twentieth.
       expect(Math.abs(modelled - demanded)).toBeLessThan(0.05 * modelled);
     }
+  });
+
+  /** Step response of 100 mm at each time, of a step as steep as a band to 100 GHz with a soft end lets it be. */
+  function stepResponse(dispersion: Dielectric['dispersion'], timesS: readonly number[]): number[] {
+    const stepHz = 1e8;
+    const topHz = 1e11;
+    const f = Float64Array.from({ length: topHz / stepHz }, (_, k) => (k + 0.5) * stepHz);
+    const materials = { sheets: [laminate(3.7, 0.02, dispersion)], conductor: smooth };
+    const line = lineOfField(solveSection(strip), strip, materials, f).modes.single!;
+    const through = [...f].map((hz, k) => {
+      const [alpha, beta] = propagation(line, k);
+      const soft = Math.exp(-((hz / topHz) ** 2) * 6);
+      return [0.1 * beta, Math.exp(-0.1 * alpha) * soft] as const;
+    });
+    // Odd multiples of half a step: a square wave whose edges stand 10 ns apart.
+    return timesS.map((t) =>
+      through.reduce((sum, [phase, size], k) => {
+        return sum + (stepHz * size * Math.sin(2 * Math.PI * f[k]! * t - phase)) / (Math.PI * f[k]!);
+      }, 0.5),
+    );
+  }
+
+  it('shows nothing of a step before the delay of its fastest waves', () => {
+    const [atInfinity] = permittivity(laminate(3.7, 0.02), Float64Array.of(1e14));
+    const delayS = (0.1 * Math.sqrt(atInfinity!)) / c0;
+    const times = [0.4, 0.6, 0.8, 0.9, 0.95].map((share) => share * delayS);
+    const [base, ...early] = stepResponse('wideband-debye', times);
+    early.forEach((value) => expect(Math.abs(value - base!)).toBeLessThan(1e-4));
+    // A constant permittivity with loss is already on its way by then.
+    const [resting, , , , ahead] = stepResponse('constant', times);
+    expect(ahead! - resting!).toBeGreaterThan(0.02);
+    const [risen] = stepResponse('wideband-debye', [1.2 * delayS]);
+    expect(risen).toBeGreaterThan(0.9);
   });
 
   it('of rough copper would not be so, were reactance and resistance raised alike', () => {

@@ -1,6 +1,6 @@
 import { internalImpedance, type Conductor } from '../conductor';
 import { speedOfLight } from '../constants';
-import { permittivity, type Dielectric } from '../dielectric';
+import { fitWidebandDebye, permittivity, type Dielectric } from '../dielectric';
 import { lineModeOf, type LineMode, type Propagation } from '../line-constants';
 import { disperseMicrostrip, microstripPermittivity } from '../microstrip';
 import type { ModeName } from '../models';
@@ -24,8 +24,11 @@ const dispersionLimit = 0.13;
 
 /**
  * Line constants over frequency from a solved section, without solving again: the effective permittivity follows the dielectrics by their
- * filling (first order in their change and in the loss), copper by its walls, and a microstrip disperses by the ratios of formula B2
- * at its height, the single line's on both modes of a pair. Strip line has no dispersion but the dielectrics' own.
+ * filling, copper by its walls, and a microstrip disperses by the ratios of formula B2 at its height, the single line's on both modes of
+ * a pair. Strip line has no dispersion but the dielectrics' own; that of a buried microstrip is left out.
+ *
+ * Fillings are taken at the permittivities solved with, first order in their change and in the loss: with Df up to 0.03 that is within 0.02 % in
+ * permittivity from 1 GHz to 50 GHz and 0.1 % down to 10 kHz, within 1 % in loss.
  */
 export function lineOfField(
   solution: FieldSolution,
@@ -59,9 +62,27 @@ export function lineOfField(
       frequenciesHz,
     );
   }
-  const constant = dielectrics.some(({ dispersion: kind, df }) => kind === 'constant' && df > 0);
-  const cautions = constant ? ['A constant permittivity with losses is not causal.'] : [];
-  return { modes, cautions: [...cautions, ...dispersion.cautions] };
+  return { modes, cautions: [...dielectricCautions(dielectrics), ...dispersion.cautions] };
+}
+
+/** A fit this far off its points, relative, is worth a word. */
+const worthTelling = { dk: 0.01, df: 0.1 };
+
+function dielectricCautions(dielectrics: readonly Dielectric[]): string[] {
+  const cautions = new Set<string>();
+  for (const material of dielectrics) {
+    if (material.dispersion === 'constant' && material.df > 0) {
+      cautions.add('A constant permittivity with losses is not causal.');
+    }
+    if (!material.furtherPoints?.length) continue;
+    const { dk, df } = fitWidebandDebye(material).worst;
+    if (dk < worthTelling.dk && df < worthTelling.df) continue;
+    const [offDk, offDf] = [dk, df].map((off) => `${(off * 100).toFixed(1)} %`);
+    cautions.add(
+      `The points of a dielectric lie on no one model: it misses them by up to ${offDk} in Dk, ${offDf} in Df.`,
+    );
+  }
+  return [...cautions];
 }
 
 /** Complex effective permittivity at each frequency, pairs (ee', ee''). */
