@@ -1,11 +1,10 @@
 import { readFileSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
-import { buildElement, type BuildContext } from '@tollgate/elements';
-import type { ChannelElement } from '@tollgate/contracts';
+import { twoPortInto, type TwoPortKind } from '@tollgate/elements';
+import type { ElementOf } from '@tollgate/contracts';
 import {
   cascadeAll,
   cascadeInto,
-  through,
   uniformReference,
   type CascadePorts,
   type Network,
@@ -45,34 +44,30 @@ function cascades(ports: CascadePorts, runs: number): void {
 
 const trialPoints = 500;
 
-/** Twenty elements with values of their own: ten lines, five series R-L, five shunt C. */
-function randomElements(): ChannelElement[] {
-  return Array.from({ length: 20 }, (_unused, k): ChannelElement => {
-    if (k % 4 === 1) {
-      return { kind: 'series', resistanceOhm: uniform(), inductanceH: uniform() * 1e-10 };
-    }
-    if (k % 4 === 3) return { kind: 'shunt', capacitanceF: uniform() * 1e-13 };
-    return {
-      kind: 'line',
-      z0Ohm: 40 + 20 * uniform(),
-      lengthM: 0.02 * uniform(),
-      effectivePermittivity: 3 + uniform(),
-      lossSqrtDbPerM: 5 * uniform(),
-      lossLinearDbPerM: 5 * uniform(),
-    };
-  });
+/** Element k of a channel, with values of its own: of four, two lines, a series R-L and a shunt C. */
+function randomElement(k: number): ElementOf<TwoPortKind> {
+  if (k % 4 === 1) return { kind: 'series', resistanceOhm: uniform(), inductanceH: uniform() * 1e-10 };
+  if (k % 4 === 3) return { kind: 'shunt', capacitanceF: uniform() * 1e-13 };
+  return {
+    kind: 'line',
+    z0Ohm: 40 + 20 * uniform(),
+    lengthM: 0.02 * uniform(),
+    effectivePermittivity: 3 + uniform(),
+    lossSqrtDbPerM: 5 * uniform(),
+    lossLinearDbPerM: 5 * uniform(),
+  };
 }
 
-/** A thousand channels of random elements, built and cascaded. */
+/** A thousand channels of twenty random elements, built and cascaded. */
 function trials(): void {
   const frequenciesHz = Float64Array.from({ length: trialPoints }, (_unused, k) => (k + 1) * 4e7);
-  const context: BuildContext = { signaling: 'single-ended', jointOhm: 50, parts: new Map() };
-  const s = through(2, trialPoints);
+  const s = new Float64Array(trialPoints * 8);
+  const next = new Float64Array(trialPoints * 8);
   for (let trial = 0; trial < 1000; trial++) {
-    const elements = randomElements();
-    s.set(buildElement(elements[0]!, frequenciesHz, context).s);
-    for (let k = 1; k < elements.length; k++) {
-      cascadeInto(s, s, buildElement(elements[k]!, frequenciesHz, context).s, 2, trialPoints);
+    twoPortInto(s, randomElement(0), frequenciesHz, 50);
+    for (let k = 1; k < 20; k++) {
+      twoPortInto(next, randomElement(k), frequenciesHz, 50);
+      cascadeInto(s, s, next, 2, trialPoints);
     }
   }
 }

@@ -2,7 +2,7 @@ import { dbPerNeper, lightSpeedMPerS } from './constants';
 import type { BranchValue } from './branch';
 import { setValue } from './branch';
 import { writeSymmetric } from './symmetric';
-import { turnInto } from './turn';
+import { decayTable, turnTable } from './turn-and-decay';
 
 /** A uniform line of real impedance whose loss grows with sqrt(f) and f. */
 export interface LossyLine {
@@ -24,59 +24,97 @@ export function linePhaseRad(line: LossyLine, frequencyHz: number): number {
   return (2 * Math.PI * frequencyHz * Math.sqrt(line.effectivePermittivity) * line.lengthM) / lightSpeedMPerS;
 }
 
-/**
- * S of a line between equal real references at every frequency, from its own reflection and one pass: with
- * G = (Zc - R)/(Zc + R) and P = e^(-gamma l), S11 = G (1 - P^2)/(1 - G^2 P^2), S21 = P (1 - G^2)/(1 - G^2 P^2). Nothing large is
- * subtracted, so S21 keeps its relative accuracy however lossy the line (multiple reflections, Pozar 2.4).
- *
- * One loop with everything in it: this is where a check of many lines spends its time.
- */
+/** S of a line between equal real references at every frequency; `lineInto` says how. */
 export function lineTwoPort(
   line: LossyLine,
   frequenciesHz: Float64Array,
   referenceOhm: number,
 ): Float64Array {
-  const points = frequenciesHz.length;
-  const out = new Float64Array(points * 8);
+  const out = new Float64Array(frequenciesHz.length * 8);
+  lineInto(out, line, frequenciesHz, referenceOhm);
+  return out;
+}
+
+/**
+ * S of a line between equal real references, 8 numbers a point, from its own reflection and one pass: with G = (Zc - R)/(Zc + R)
+ * and P = e^(-gamma l), S11 = G (1 - P^2)/(1 - G^2 P^2), S21 = P (1 - G^2)/(1 - G^2 P^2). Nothing large is subtracted, so S21 keeps
+ * its relative accuracy however lossy the line (multiple reflections, Pozar 2.4).
+ *
+ * This is where a check of many lines spends its time: one loop with everything in it, and e^-a, cos and sin from the nearest entry
+ * of a table and the Taylor series of the rest, cut where what follows is below 1e-16.
+ */
+export function lineInto(
+  out: Float64Array,
+  line: LossyLine,
+  frequenciesHz: Float64Array,
+  referenceOhm: number,
+): void {
+  const end = frequenciesHz.length;
+  const turns = turnTable;
+  const decays = decayTable;
   const g = (line.z0Ohm - referenceOhm) / (line.z0Ohm + referenceOhm);
   const g2 = g * g;
+  const rest = 1 - g2;
   const radPerHz = linePhaseRad(line, 1);
   const rootNp = (line.lossSqrtDbPerM * line.lengthM) / (dbPerNeper * Math.sqrt(1e9));
   const linearNp = (line.lossLinearDbPerM * line.lengthM) / (dbPerNeper * 1e9);
-  for (let point = 0, at = 0; point < points; point++, at += 8) {
+  for (let point = 0; point < end; point++) {
     const f = frequenciesHz[point]!;
-    const one = Math.exp(-(rootNp * Math.sqrt(f) + linearNp * f));
+    const attenuation = rootNp * Math.sqrt(f) + linearNp * f;
     const phase = radPerHz * f;
-    turnInto(turn, phase);
-    const cos = turn[0]!;
-    const sin = turn[1]!;
+    let one: number;
+    let cos: number;
+    let sin: number;
+    if (attenuation < 31.9 && phase < 1e5) {
+      const decay = (attenuation * 32 + 0.5) | 0;
+      const a = decay * 0.03125 - attenuation;
+      const a2 = a * a;
+      one =
+        decays[decay]! *
+        (1 + a + a2 * (1 / 2 + a * (1 / 6) + a2 * (1 / 24 + a * (1 / 120) + a2 * (1 / 720))));
+      const step = (phase * 40.74366543152521 + 0.5) | 0;
+      // A 256th of a turn in two numbers, the first so short that its multiples are exact.
+      const x = phase - step * 0.024543692605220713 - step * 9.495469541415925e-13;
+      const x2 = x * x;
+      const s = x + x * x2 * (x2 * (1 / 120) - 1 / 6);
+      const c = x2 * (x2 * (1 / 24 - x2 * (1 / 720)) - 1 / 2);
+      const at = (step & 255) << 1;
+      const tableCos = turns[at]!;
+      const tableSin = turns[at | 1]!;
+      cos = tableCos + (tableCos * c - tableSin * s);
+      sin = tableSin + (tableSin * c + tableCos * s);
+    } else {
+      one = Math.exp(-attenuation);
+      cos = Math.cos(phase);
+      sin = Math.sin(phase);
+    }
     const two = one * one;
     // 1 - P^2 without cancellation for a short line: (1 - e^-2a) + e^-2a (1 - cos 2p + j sin 2p).
-    const nRe = 1 - two + 2 * two * sin * sin;
-    const nIm = 2 * two * sin * cos;
-    const dRe = 1 - g2 + g2 * nRe;
+    const turned = 2 * two * sin;
+    const nRe = 1 - two + turned * sin;
+    const nIm = turned * cos;
+    const dRe = rest + g2 * nRe;
     const dIm = g2 * nIm;
     const inverse = 1 / (dRe * dRe + dIm * dIm);
     const iRe = dRe * inverse;
     const iIm = dIm * inverse;
-    const t = one * (1 - g2);
+    const t = one * rest;
     const tRe = t * (cos * iRe - sin * iIm);
     const tIm = -t * (sin * iRe + cos * iIm);
     const rRe = g * (nRe * iRe + nIm * iIm);
     const rIm = g * (nIm * iRe - nRe * iIm);
-    out[at] = rRe;
-    out[at + 1] = rIm;
-    out[at + 2] = tRe;
-    out[at + 3] = tIm;
-    out[at + 4] = tRe;
-    out[at + 5] = tIm;
-    out[at + 6] = rRe;
-    out[at + 7] = rIm;
+    // `k | n` is k + n, without a check for overflow.
+    const k = point << 3;
+    out[k] = rRe;
+    out[k | 1] = rIm;
+    out[k | 2] = tRe;
+    out[k | 3] = tIm;
+    out[k | 4] = tRe;
+    out[k | 5] = tIm;
+    out[k | 6] = rRe;
+    out[k | 7] = rIm;
   }
-  return out;
 }
-
-const turn = new Float64Array(2);
 
 /** The same at one frequency for a complex reflection; attenuation in nepers, phase in radians. */
 export function passInto(

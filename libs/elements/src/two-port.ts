@@ -3,7 +3,7 @@ import { cascade2Into } from '@tollgate/network';
 import { branchAt, seriesInto, setValue, shuntInto, type BranchValue } from './branch';
 import { budgetLossWriter } from './budget-loss';
 import { dbPerNeper } from './constants';
-import { lineTwoPort, stubAt } from './line';
+import { lineInto, stubAt } from './line';
 import { rlgcInto } from './rlgc';
 import { writeSymmetric } from './symmetric';
 import type { PointWriter } from './types';
@@ -85,47 +85,66 @@ export function twoPort(
   frequenciesHz: Float64Array,
   referenceOhm: number,
 ): TwoPort {
-  if (element.kind === 'line') return whole(lineTwoPort(element, frequenciesHz, referenceOhm));
-  if (isBranch(element)) return whole(branchTwoPort(element, frequenciesHz, referenceOhm));
+  const s = new Float64Array(frequenciesHz.length * 8);
+  return { s, trappedPoints: twoPortInto(s, element, frequenciesHz, referenceOhm) };
+}
+
+/**
+ * The same into an array that may be used again: 8 numbers a point, S11, S12, S21, S22 as real and imaginary part. Nothing is
+ * allocated per point.
+ * @param frequenciesHz ascending, from 0 up
+ * @returns at how many points a wave is trapped without loss between the parts the element is made of
+ */
+export function twoPortInto(
+  out: Float64Array,
+  element: ElementOf<TwoPortKind>,
+  frequenciesHz: Float64Array,
+  referenceOhm: number,
+): number {
+  if (element.kind === 'line') {
+    lineInto(out, element, frequenciesHz, referenceOhm);
+    return 0;
+  }
+  if (isBranch(element)) {
+    branchInto(out, element, frequenciesHz, referenceOhm);
+    return 0;
+  }
   const made = (
     writers[element.kind] as (element: never, referenceOhm: number) => PointWriter | readonly PointWriter[]
   )(element as never, referenceOhm);
-  return typeof made === 'function' ? whole(filled(made, frequenciesHz)) : cascaded(made, frequenciesHz);
-}
-
-function whole(s: Float64Array): TwoPort {
-  return { s, trappedPoints: 0 };
+  if (typeof made !== 'function') return cascadedInto(out, made, frequenciesHz);
+  fillInto(out, made, frequenciesHz);
+  return 0;
 }
 
 function isBranch(element: ChannelElement): element is ElementOf<'series' | 'shunt'> {
   return element.kind === 'series' || element.kind === 'shunt';
 }
 
-function branchTwoPort(
+function branchInto(
+  out: Float64Array,
   element: ElementOf<'series' | 'shunt'>,
   frequenciesHz: Float64Array,
   referenceOhm: number,
-): Float64Array {
-  const out = new Float64Array(frequenciesHz.length * 8);
+): void {
   const series = element.kind === 'series';
   const { resistanceOhm = 0, inductanceH = 0, capacitanceF } = element;
   if (series && capacitanceF === undefined) {
     // q = Z/(2R)
     const scale = 1 / (2 * referenceOhm);
     splitInto(out, frequenciesHz, resistanceOhm * scale, 2 * Math.PI * inductanceH * scale, 1);
-    return out;
+    return;
   }
   if (!series && capacitanceF !== undefined && resistanceOhm === 0 && inductanceH === 0) {
     // q = Y R/2
     splitInto(out, frequenciesHz, 0, Math.PI * capacitanceF * referenceOhm, -1);
-    return out;
+    return;
   }
   for (let point = 0; point < frequenciesHz.length; point++) {
     branchAt(element, frequenciesHz[point]!, value);
     if (series) seriesInto(out, point * 8, value, referenceOhm);
     else shuntInto(out, point * 8, value, referenceOhm);
   }
-  return out;
 }
 
 /** A branch whose q = re + j f imPerHz needs no choice between impedance and admittance: S21 = 1/(1 + q), S11 = sign q/(1 + q). */
@@ -137,37 +156,54 @@ function splitInto(
   sign: 1 | -1,
 ): void {
   const one = 1 + re;
-  for (let point = 0, at = 0; point < frequenciesHz.length; point++, at += 8) {
+  const square = one * one;
+  const back = sign * re * one;
+  const end = frequenciesHz.length;
+  for (let point = 0; point < end; point++) {
     const im = imPerHz * frequenciesHz[point]!;
-    const inverse = 1 / (one * one + im * im);
+    const im2 = im * im;
+    const inverse = 1 / (square + im2);
+    const turned = im * inverse;
     const tRe = one * inverse;
-    const tIm = -im * inverse;
-    const rRe = sign * (re * one + im * im) * inverse;
-    const rIm = sign * im * inverse;
-    out[at] = rRe;
-    out[at + 1] = rIm;
-    out[at + 2] = tRe;
-    out[at + 3] = tIm;
-    out[at + 4] = tRe;
-    out[at + 5] = tIm;
-    out[at + 6] = rRe;
-    out[at + 7] = rIm;
+    const tIm = -turned;
+    const rRe = (back + sign * im2) * inverse;
+    const rIm = sign * turned;
+    // `k | n` is k + n, without a check for overflow.
+    const k = point << 3;
+    out[k] = rRe;
+    out[k | 1] = rIm;
+    out[k | 2] = tRe;
+    out[k | 3] = tIm;
+    out[k | 4] = tRe;
+    out[k | 5] = tIm;
+    out[k | 6] = rRe;
+    out[k | 7] = rIm;
   }
 }
 
 export function filled(write: PointWriter, frequenciesHz: Float64Array): Float64Array {
   const out = new Float64Array(frequenciesHz.length * 8);
-  for (let point = 0; point < frequenciesHz.length; point++) write(out, point * 8, frequenciesHz[point]!);
+  fillInto(out, write, frequenciesHz);
   return out;
 }
 
-function cascaded(parts: readonly PointWriter[], frequenciesHz: Float64Array): TwoPort {
-  const [first, ...rest] = parts;
-  const s = filled(first!, frequenciesHz);
+function fillInto(out: Float64Array, write: PointWriter, frequenciesHz: Float64Array): void {
+  for (let point = 0; point < frequenciesHz.length; point++) write(out, point * 8, frequenciesHz[point]!);
+}
+
+/** The part that is cascaded next, kept from call to call and as long as the longest grid so far. */
+let next = new Float64Array(0);
+
+function cascadedInto(out: Float64Array, parts: readonly PointWriter[], frequenciesHz: Float64Array): number {
+  const points = frequenciesHz.length;
+  if (next.length < points * 8) next = new Float64Array(points * 8);
+  fillInto(out, parts[0]!, frequenciesHz);
   let trappedPoints = 0;
-  for (const part of rest)
-    trappedPoints += cascade2Into(s, s, filled(part, frequenciesHz), frequenciesHz.length);
-  return { s, trappedPoints };
+  for (let k = 1; k < parts.length; k++) {
+    fillInto(next, parts[k]!, frequenciesHz);
+    trappedPoints += cascade2Into(out, out, next, points);
+  }
+  return trappedPoints;
 }
 
 type Parts = { resistanceOhm?: number; inductanceH?: number; capacitanceF?: number };
