@@ -159,7 +159,7 @@ type Line = ChannelResponse['lines'][number];
 /** Traces say what their line is like; other elements have nothing to say. */
 function linesOf(channel: CompleteChannel, facts: Evaluation['facts']): Line[] {
   return channel.elements.flatMap((element, i) => {
-    const { line } = facts[i]! as { readonly line?: Pick<Line, 'modes'> };
-    return line ? [{ element: element.id, modes: line.modes }] : [];
+    const { line: modes } = facts[i]!;
+    return modes ? [{ element: element.id, modes }] : [];
   });
 }
