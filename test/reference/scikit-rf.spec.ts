@@ -1,3 +1,4 @@
+import { largestSingularValue } from '@tollgate/network';
 import fc from 'fast-check';
 import { describeWith, scikitRf } from '../support/needs';
 import {
@@ -62,6 +63,31 @@ describe('210 random channels', () => {
       ),
     ).toEqual([]);
   }, 120_000);
+});
+
+describe('210 random channels of passive elements', () => {
+  it('let out no more power than comes in', () => {
+    for (const { s, frequenciesHz } of evaluated) {
+      const ports = Math.sqrt(s.length / frequenciesHz.length / 2);
+      for (let at = 0; at < s.length; at += ports * ports * 2) {
+        expect(largestSingularValue(s, ports, at)).toBeLessThan(1 + 1e-12);
+      }
+    }
+  });
+  it('are reciprocal where all their elements are', () => {
+    const reciprocal = evaluated.filter(({ texts }) => texts.size === 0);
+    expect(reciprocal.length).toBeGreaterThan(50);
+    for (const { s, frequenciesHz } of reciprocal) {
+      const ports = Math.sqrt(s.length / frequenciesHz.length / 2);
+      const turned = Float64Array.from(s, (_, k) => {
+        const [entry, part] = [k >> 1, k & 1];
+        const inside = entry % (ports * ports);
+        const other = entry - inside + (inside % ports) * ports + Math.floor(inside / ports);
+        return s[other * 2 + part]!;
+      });
+      expect(largestDistance(s, turned)).toBeLessThan(1e-13);
+    }
+  });
 });
 
 describeWith(scikitRf, '210 random channels, in scikit-rf 0.15.4', () => {

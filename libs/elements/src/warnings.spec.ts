@@ -1,10 +1,10 @@
-import type { ChannelElement } from '@tollgate/contracts';
+import type { ChannelElement, ElementOf } from '@tollgate/contracts';
 import { buildElement } from './index';
 
 const frequenciesHz = Float64Array.of(0, 1e8, 1e9, 1e10);
 const build = (element: ChannelElement) =>
   buildElement(element, frequenciesHz, { signaling: 'single-ended', jointOhm: 50, parts: new Map() });
-const opens: ChannelElement = {
+const opens: ElementOf<'tee'> = {
   kind: 'tee',
   near: { capacitanceF: 1e-9 },
   shunt: { capacitanceF: 1e-12 },
@@ -21,7 +21,7 @@ describe('a wave trapped without loss inside an element', () => {
   });
   it('is told of a part inside a circuit, and of two parts of it', () => {
     const series = { kind: 'series', capacitanceF: 1e-9 } as const;
-    expect(build({ kind: 'connector', circuit: [opens as never, series, series] }).warnings).toEqual([
+    expect(build({ kind: 'connector', circuit: [opens, series, series] }).warnings).toEqual([
       'circuit[0]: Inside the tee a wave is trapped without loss at 1 point; it is taken as not there.',
       'Inside the circuit a wave is trapped without loss at 2 points; it is taken as not there.',
     ]);

@@ -23,8 +23,8 @@ export function sToTInto(
   convention: ChainConvention = 'a',
 ): void {
   const n = ports / 2;
-  const [near, far] = convention === 'c' ? [1, 0] : [0, 1];
-  const [first, last] = convention === 'b' ? [1, 0] : [0, 1];
+  const [near, far] = convention === 'c' ? ([1, 0] as const) : ([0, 1] as const);
+  const [first, last] = convention === 'b' ? ([1, 0] as const) : ([0, 1] as const);
   const [s11, s12, s21, s22, inverse, left, work] = makeBlocks(7, n) as Seven;
   for (let point = 0; point < points; point++) {
     const at = point * ports * ports * 2;
@@ -66,8 +66,8 @@ export function tToSInto(
   convention: ChainConvention = 'a',
 ): void {
   const n = ports / 2;
-  const [near, far] = convention === 'c' ? [1, 0] : [0, 1];
-  const [first, last] = convention === 'b' ? [1, 0] : [0, 1];
+  const [near, far] = convention === 'c' ? ([1, 0] as const) : ([0, 1] as const);
+  const [first, last] = convention === 'b' ? ([1, 0] as const) : ([0, 1] as const);
   const [t11, t12, t21, t22, inverse, left, work] = makeBlocks(7, n) as Seven;
   for (let point = 0; point < points; point++) {
     const at = point * ports * ports * 2;

@@ -39,6 +39,12 @@ describe('interpolation', () => {
       expect(Math.abs(magnitudeDb(network.s, 4) - dB)).toBeLessThan(0.006);
     },
   );
+  it('of real and imaginary part makes nothing of a delay of 10 ns over 50 MHz, as worked', () => {
+    const { network } = interpolate(line(grid(5e7, 5e7, 8), 10e-9), Float64Array.of(1.75e8), {
+      method: 'rectangular',
+    });
+    expect(Math.hypot(network.s[4]!, network.s[5]!)).toBeLessThan(1e-12);
+  });
   it('in polar form keeps a pure delay exactly while the phase can be unwrapped', () => {
     const wanted = grid(1.3e7, 0.7e7, 50);
     const { network, error } = interpolate(line(grid(1e7, 1e7, 60), 5e-9), wanted, { method: 'polar' });

@@ -1,5 +1,6 @@
 import {
   abcdToS2Into,
+  assessQuality,
   cascade2Into,
   maximumAvailableGain,
   renormalize,
@@ -84,6 +85,18 @@ describe('worked value of Bockelman and Eisenstadt, IEEE Trans. MTT-43 (1995)', 
     expect(largestDifference(entry(3, 2), [0.254491, -0.931377])).toBeLessThan(6e-7);
     expect(largestDifference(entry(2, 2), [0.164813, 0.044052])).toBeLessThan(6e-7);
     expect(Math.hypot(...entry(3, 0), ...entry(0, 2))).toBeLessThan(1e-15);
+    // Read in the order 1-2, 3-4 the same file has a plausible, wrong loss: -11.3 dB.
+    const wrong = new Float64Array(32);
+    const order = [0, 2, 1, 3];
+    order.forEach((row, r) =>
+      order.forEach((column, c) => {
+        const k = (row * 4 + column) * 2;
+        wrong.set(s.subarray(k, k + 2), (r * 4 + c) * 2);
+      }),
+    );
+    toMixedModeInto(mixed, wrong, 1);
+    expect(largestDifference(entry(1, 0), [0.253, 0.103])).toBeLessThan(6e-4);
+    expect(20 * Math.log10(Math.hypot(...entry(1, 0)))).toBeCloseTo(-11.3, 1);
   });
 });
 
@@ -101,5 +114,19 @@ describe('maximum available gain (Pozar, Microwave Engineering, 12.2)', () => {
     expect(maximumAvailableGain(line, 1).gain[0]).toBeCloseTo(Math.exp(-0.6), 14);
     abcdToS2Into(line, flat(lineChain(20, [0, 0.4])), 1, uniformReference(2, 50));
     expect(maximumAvailableGain(line, 1).gain[0]).toBe(1);
+  });
+});
+
+describe('a figure of causality (IEEE Std 370-2020)', () => {
+  it('is 100 for 0.3 e^-jw50ps + 0.2 e^+jw20ps too, part of which comes early: it hints, and proves nothing', () => {
+    const frequenciesHz = Float64Array.from({ length: 101 }, (_, k) => k * 1e8);
+    const values = new Float64Array(frequenciesHz.length * 2);
+    frequenciesHz.forEach((f, k) => {
+      const w = 2 * Math.PI * f;
+      values[k * 2] = 0.3 * Math.cos(w * 50e-12) + 0.2 * Math.cos(w * 20e-12);
+      values[k * 2 + 1] = -0.3 * Math.sin(w * 50e-12) + 0.2 * Math.sin(w * 20e-12);
+    });
+    const network = { ports: 1, frequenciesHz, s: values, referenceOhm: uniformReference(1, 50) };
+    expect(assessQuality(network).causality!.percent).toBeCloseTo(100, 9);
   });
 });
