@@ -3,6 +3,7 @@ import {
   Component,
   computed,
   effect,
+  ElementRef,
   inject,
   input,
   untracked,
@@ -71,6 +72,7 @@ export class StackupPage {
   private readonly toasts = inject(Toasts);
   protected readonly store = inject(StackupStore);
   protected readonly runner = inject(DeskRunner);
+  private readonly host = inject<ElementRef<HTMLElement>>(ElementRef);
 
   /** From the address. */
   readonly revisionId = input.required<string>();
@@ -157,6 +159,14 @@ export class StackupPage {
   private openSave() {
     const stackup = this.store.stackup();
     if (!stackup || !this.store.mayChange() || !this.store.dirty()) return undefined;
+    const unread = this.host.nativeElement.querySelector<HTMLElement>(
+      'tg-layer-table input[aria-invalid="true"]',
+    );
+    if (unread) {
+      unread.focus();
+      this.toasts.failure('A value of the layers could not be taken; mend it first.');
+      return undefined;
+    }
     if (this.store.problems().length) {
       const { message, mend } = this.store.problems()[0]!;
       this.toasts.failure(`Mend the layers first: ${message} ${mend ?? ''}`.trim());

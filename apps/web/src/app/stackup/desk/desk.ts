@@ -33,9 +33,14 @@ export class Desk {
     const section = this.runner.section();
     return section ? figureRows(section) : [];
   });
-  protected readonly meshError = computed(() => {
-    const solver = this.runner.section()?.solver;
-    return solver ? `mesh error ${(solver.errorZ0 * 100).toFixed(2)} %, ${solver.unknowns} unknowns` : '';
+  protected readonly standing = computed(() => {
+    const section = this.runner.section();
+    if (!section) return '';
+    const { standing, solver } = section;
+    const mesh = solver
+      ? `, mesh error ${(solver.errorZ0 * 100).toFixed(2)} %, ${solver.unknowns} unknowns`
+      : '';
+    return `${standing}${mesh}`;
   });
   protected readonly closedNote = computed(() => {
     const section = this.runner.section();

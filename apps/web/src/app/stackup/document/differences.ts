@@ -59,7 +59,7 @@ function worded(value: unknown, dimension: Dimension | undefined): string {
   if (value === undefined) return 'none';
   if (typeof value === 'number' && dimension) return formatQuantity(value, dimension);
   if (typeof value === 'object') return roughnessWords(value as Record<string, unknown>);
-  return String(value);
+  return typeof value === 'string' ? value : JSON.stringify(value);
 }
 
 /** Roughness of both faces, or of the foot and the top. */

@@ -18,10 +18,12 @@ export interface DrawnStack {
 
 const leastPx = 360;
 const lineHeightPx = 18;
+/** A layer's share of the height, near that of its row in the table beside. */
+const rowPx = 28;
 
 /** Layers in one scale from top to bottom; the picture grows with their number, so that each has a line of words. */
 export function drawnStack(layers: readonly Layer[]): DrawnStack {
-  const heightPx = Math.max(leastPx, layers.length * lineHeightPx + 16);
+  const heightPx = Math.max(leastPx, layers.length * rowPx);
   const totalM = layers.reduce((sum, { thicknessM }) => sum + thicknessM, 0);
   const pxPerM = totalM > 0 ? heightPx / totalM : 0;
   const copper = layers.flatMap(({ kind }, i) => (kind === 'copper' ? [i] : []));

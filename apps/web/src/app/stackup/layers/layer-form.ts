@@ -61,8 +61,8 @@ export class LayerForm {
   protected readonly sides = ['foot', 'top'] as const;
   protected readonly sideTitles = { foot: 'Foot (bonded face)', top: 'Top face' } as const;
   protected readonly dispersions = [
-    { value: 'wideband-debye', title: 'Wideband Debye, causal' },
-    { value: 'constant', title: 'Constant, not causal' },
+    { value: 'wideband-debye', title: 'wideband Debye' },
+    { value: 'constant', title: 'constant' },
   ];
   protected readonly foilSides = [
     { value: 'down', title: 'down' },

@@ -60,6 +60,7 @@ export class LayerTable {
       foil: layer.kind === 'copper' ? foilWords(layer) : '',
       tolerances: toleranceWords(layer),
       path: `layers[${i}]`,
+      wrong: this.problemsOf(`layers[${i}]`),
       number: i + 1,
       selected: key === this.store.selectedKey(),
     })),
@@ -71,6 +72,11 @@ export class LayerTable {
     const thicknessM = layers.reduce((sum, layer) => sum + layer.thicknessM, 0);
     return `${copper} copper layer${copper === 1 ? '' : 's'}, ${formatQuantity(thicknessM, 'length', { unit: 'mm', digits: 4 })}`;
   });
+
+  private problemsOf(path: string): string[] {
+    const mine = this.store.problems().filter((problem) => problem.path.startsWith(`${path}.`));
+    return mine.map(({ message, mend }) => [message, mend].filter(Boolean).join(' '));
+  }
 
   protected rename(key: string, name: string | undefined): void {
     this.change(key, 'name', name ?? '');
