@@ -101,11 +101,15 @@ function movedLayer(layer: Layer, shift: (quantity: TolerancedQuantity) => numbe
   const thicker = (quantity: TolerancedQuantity) =>
     moved(layer.thicknessM, shift(quantity) * (layer.thicknessToleranceM ?? 0));
   if (layer.kind === 'copper') return { ...layer, thicknessM: thicker('copper thickness') };
+  const point = <Point extends { dk: number; df: number }>(at: Point): Point => ({
+    ...at,
+    dk: Math.max(1, at.dk + shift('dk') * (layer.dkTolerance ?? 0)),
+    df: Math.max(0, at.df + shift('df') * (layer.dfTolerance ?? 0)),
+  });
   return {
-    ...layer,
+    ...point(layer),
     thicknessM: thicker('dielectric thickness'),
-    dk: Math.max(1, layer.dk + shift('dk') * (layer.dkTolerance ?? 0)),
-    df: Math.max(0, layer.df + shift('df') * (layer.dfTolerance ?? 0)),
+    ...(layer.furtherPoints ? { furtherPoints: layer.furtherPoints.map(point) } : {}),
   };
 }
 

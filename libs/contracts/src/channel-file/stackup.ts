@@ -19,6 +19,17 @@ const dielectricFields = {
   dfTolerance: ratio('Df tolerance', 0, 10).optional(),
   atHz: field.frequency('Frequency of Dk and Df', { above: 0 }),
   dispersion: z.enum(['wideband-debye', 'constant'], 'Dispersion is wideband-debye or constant.'),
+  /** Further points of a data sheet: the wideband Debye model is fitted through them and the first. */
+  furtherPoints: z
+    .array(
+      z.strictObject({
+        dk: ratio('Dk', 1, 1000),
+        df: ratio('Df', 0, 10),
+        atHz: field.frequency('Frequency of Dk and Df', { above: 0 }),
+      }),
+    )
+    .max(20, 'A material has at most 20 further points.')
+    .optional(),
   source: line('Source').optional(),
 };
 

@@ -1,4 +1,5 @@
 import { LineError, solveLine, type CrossSection, type Dielectric, type SolvedLine } from '@tollgate/lines';
+import { sameMaterial } from './material';
 import type { Sheet, TraceSection } from './section';
 
 /**
@@ -49,10 +50,7 @@ function sidesOf({ sheets, traceAtM, thicknessM }: TraceSection): Record<'below'
 function oneMaterial(sheets: readonly Sheet[], side: 'below' | 'above'): Dielectric {
   const [first, ...rest] = sheets;
   if (!first) throw uncovered(`No dielectric lies ${side} the trace.`);
-  const { dk, df, atHz, dispersion } = first.material;
-  const same = rest.every(
-    ({ material: m }) => m.dk === dk && m.df === df && m.atHz === atHz && m.dispersion === dispersion,
-  );
+  const same = rest.every(({ material }) => sameMaterial(material, first.material));
   if (!same) throw uncovered(`Different dielectrics ${side} the trace have no listed closed form.`);
   return first.material;
 }

@@ -2,11 +2,11 @@ import {
   lineOfField,
   sectionKey,
   solveSection,
-  type Dielectric,
   type FieldSection,
   type FieldSolution,
   type SectionMaterials,
 } from '@tollgate/lines';
+import { sameMaterial } from './material';
 import type { Sheet, TraceSection } from './section';
 import type { TraceModel } from './model';
 
@@ -78,8 +78,4 @@ function merged(sheets: readonly Sheet[]): Sheet[] {
     }
   }
   return out;
-}
-
-function sameMaterial(a: Dielectric, b: Dielectric): boolean {
-  return a.dk === b.dk && a.df === b.df && a.atHz === b.atHz && a.dispersion === b.dispersion;
 }

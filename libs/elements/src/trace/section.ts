@@ -9,6 +9,7 @@ import {
   type Placed,
   type TracePlace,
 } from './layers';
+import { materialOf } from './material';
 
 /** Temperature of a board that states none, in degrees. */
 const roomC = 20;
@@ -139,8 +140,8 @@ function besideCopper(
   return undefined;
 }
 
-function sheetOf({ name, thicknessM, dk, df, atHz, dispersion }: DielectricLayer): Sheet {
-  return { layer: name, thicknessM, material: { dk, df, atHz, dispersion } };
+function sheetOf(layer: DielectricLayer): Sheet {
+  return { layer: layer.name, thicknessM: layer.thicknessM, material: materialOf(layer) };
 }
 
 function conductorOf(copper: CopperLayer, placed: Placed, turned: boolean, temperatureC: number): Conductor {

@@ -248,3 +248,29 @@ describe('the standing of a trace', () => {
     expect(elementStanding(element, stackup)).toMatchObject({ standing: 'assumed' });
   });
 });
+
+describe('a dielectric of several points', () => {
+  const several = (furtherPoints: object[]) =>
+    strip.map((layer) =>
+      layer.kind === 'dielectric' ? { ...layer, dispersion: 'wideband-debye', furtherPoints } : layer,
+    );
+
+  it('is fitted through them', () => {
+    const f = Float64Array.of(2e10);
+    const points = [{ dk: 3.62, df: 0.0085, atHz: 1e10 }];
+    const [one, two] = [several([]), several(points)].map((layers) => {
+      const { element, context } = read(layers, {});
+      return buildElement(element, f, context).line!.single!.dielectricLossDbPerM[0]!;
+    });
+    expect(two! / one!).toBeGreaterThan(1.02);
+    expect(two! / one!).toBeLessThan(1.15);
+  });
+
+  it('is refused where no causal model goes through them', () => {
+    const { element, stackup } = read(several([{ dk: 4.5, df: 0.008, atHz: 1e10 }]), {});
+    expect(elementProblems(element, 'single-ended', stackup)[0]).toMatchObject({
+      path: 'layer',
+      message: expect.stringContaining('Debye'),
+    });
+  });
+});

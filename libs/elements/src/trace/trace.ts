@@ -1,5 +1,5 @@
 import type { ElementOf, Signaling, Stackup } from '@tollgate/contracts';
-import { LineError, shapeOf, type LineMode, type ModeName } from '@tollgate/lines';
+import { LineError, permittivity, shapeOf, type LineMode, type ModeName } from '@tollgate/lines';
 import { cascade4Into } from '@tollgate/network';
 import { dbPerNeper, lightSpeedMPerS } from '../constants';
 import { pairOfLegs, pairOfModes } from '../legs';
@@ -51,7 +51,11 @@ export function traceProblems(
         mend: 'Use longer pieces between the bends, or a narrower pair.',
       });
     }
-    shapeOf(fieldOf(sectionOf(stackup, trace)).field);
+    const { field, materials } = fieldOf(sectionOf(stackup, trace));
+    shapeOf(field);
+    for (const material of [...materials.sheets, ...(materials.mask ? [materials.mask] : [])]) {
+      permittivity(material, nowhere);
+    }
   });
   return found ? [...problems, found] : problems;
 }
@@ -66,6 +70,9 @@ function problemOf(run: () => void): ElementProblem | undefined {
     throw error;
   }
 }
+
+/** No frequency: what is asked then is whether there is a model at all. */
+const nowhere = new Float64Array(0);
 
 const ownFields: readonly string[] = ['widthM', 'gapM', 'lengthM', 'path'];
 

@@ -1,6 +1,7 @@
 import type { Dielectric } from '@tollgate/lines';
 import type { Stackup } from '@tollgate/contracts';
-import { isCopper, type DielectricLayer } from '../trace/layers';
+import { isCopper } from '../trace/layers';
+import { materialOf } from '../trace/material';
 import type { Barrel, PlacedLayer } from './barrel';
 import { isPlane } from './sizes';
 
@@ -14,7 +15,7 @@ const air: Dielectric = { dk: 1, df: 0, atHz: 1e9, dispersion: 'constant' };
  */
 export function materialAt(barrel: Barrel, stackup: Stackup, placed: PlacedLayer): Dielectric {
   const { layer } = placed;
-  if (!isCopper(layer)) return dielectricOf(layer);
+  if (!isCopper(layer)) return materialOf(layer);
   const { layers } = barrel;
   const index = layers.indexOf(placed);
   const outer = index === 0 || index === layers.length - 1;
@@ -26,7 +27,7 @@ export function materialAt(barrel: Barrel, stackup: Stackup, placed: PlacedLayer
 function nextDielectric(layers: readonly PlacedLayer[], index: number, step: number): Dielectric | undefined {
   for (let i = index + step; i >= 0 && i < layers.length; i += step) {
     const { layer } = layers[i]!;
-    if (!isCopper(layer)) return dielectricOf(layer);
+    if (!isCopper(layer)) return materialOf(layer);
   }
   return undefined;
 }
@@ -34,9 +35,5 @@ function nextDielectric(layers: readonly PlacedLayer[], index: number, step: num
 function maskBeside(stackup: Stackup, top: boolean): Dielectric {
   const layers = stackup.layers ?? [];
   const outer = top ? layers[0] : layers[layers.length - 1];
-  return outer?.kind === 'soldermask' ? dielectricOf(outer) : air;
-}
-
-function dielectricOf({ dk, df, atHz, dispersion }: DielectricLayer): Dielectric {
-  return { dk, df, atHz, dispersion };
+  return outer?.kind === 'soldermask' ? materialOf(outer) : air;
 }
