@@ -20,8 +20,12 @@ describe('a wave trapped without loss inside an element', () => {
     ]);
   });
   it('is told of a part inside a circuit, and of two parts of it', () => {
+    const connector = {
+      ...({ kind: 'connector', interpolation: 'polar', reversed: false } as const),
+      ...({ below: 'refuse', above: 'refuse' } as const),
+    };
     const series = { kind: 'series', capacitanceF: 1e-9 } as const;
-    expect(build({ kind: 'connector', circuit: [opens, series, series] }).warnings).toEqual([
+    expect(build({ ...connector, circuit: [opens, series, series] }).warnings).toEqual([
       'circuit[0]: Inside the tee a wave is trapped without loss at 1 point; it is taken as not there.',
       'Inside the circuit a wave is trapped without loss at 2 points; it is taken as not there.',
     ]);
