@@ -132,6 +132,25 @@ describe('a line from a field solution', () => {
   });
 });
 
+describe('a microstrip under more dielectric', () => {
+  it('does not disperse, and says how much that may leave out where it is over a percent', () => {
+    const buried: FieldSection = {
+      sheets: [{ thicknessM: 1e-3, dk: 4.2 }],
+      planeAbove: false,
+      trace: { widthM: 1e-3, thicknessM: 35 * um },
+      traceAtM: 0.8e-3,
+    };
+    const materials = { sheets: [laminate(4.2, 0, 'constant')], conductor: { conductivitySPerM: 1e15 } };
+    const solution = solveSection(buried);
+    const to = (...hz: number[]) => lineOfField(solution, buried, materials, Float64Array.from(hz));
+    expect(to(1e8, 1e9).cautions).toEqual([]);
+    const { modes, cautions } = to(1e8, 1e10);
+    expect(cautions).toEqual([expect.stringMatching(/left out: up to \d\.\d %/)]);
+    const [slow, fast] = [0, 1].map((k) => propagation(modes.single!, k)[1] / [1e8, 1e10][k]!);
+    expect(fast! / slow!).toBeCloseTo(1, 4);
+  });
+});
+
 describe('a dielectric of several points', () => {
   const f = Float64Array.of(1e9);
   const lossAndCautions = (furtherPoints: Dielectric['furtherPoints']) => {

@@ -46,7 +46,7 @@ export function lineOfField(
   };
   const dielectrics = [...materials.sheets, ...(materials.mask ? [materials.mask] : [])];
   const curves = dielectrics.map((material) => permittivity(material, frequenciesHz));
-  const dispersion = dispersionOf(section, rectangle.widthM, materials.sheets, frequenciesHz);
+  const dispersion = dispersionOf(section, rectangle.widthM, frequenciesHz);
   const modes: Partial<Record<ModeName, LineMode>> = {};
   for (const [name, mode] of Object.entries(solution.modes) as [ModeName, FieldMode][]) {
     const { foot = 'down' } = section.trace;
@@ -123,19 +123,37 @@ interface Dispersion {
 /** Below this permittivity the formulas have no meaning, and nothing disperses. */
 const leastPermittivity = 1.1;
 
-function dispersionOf(
-  section: FieldSection,
-  widthM: number,
-  sheets: readonly Dielectric[],
-  frequenciesHz: Float64Array,
-): Dispersion {
+/** A buried microstrip rises less than one on top: from here on, relative, what is left out is told. */
+const buriedRise = 0.01;
+
+function buriedCaution(rise: number): string {
+  const percent = (rise * 100).toFixed(1);
+  return `The dispersion of a buried microstrip is left out: up to ${percent} % in effective permittivity at the highest frequency.`;
+}
+
+/** Sheets under the trace are capacitances in series. */
+function permittivityUnder({ sheets, traceAtM }: FieldSection): number {
+  let elastance = 0;
+  let lowM = 0;
+  for (const { thicknessM, dk } of sheets) {
+    elastance += Math.max(Math.min(traceAtM - lowM, thicknessM), 0) / dk;
+    lowM += thicknessM;
+  }
+  return traceAtM / elastance;
+}
+
+function dispersionOf(section: FieldSection, widthM: number, frequenciesHz: Float64Array): Dispersion {
   const heightM = section.traceAtM;
-  const outer = isOuter(section);
-  // Sheets under the trace are capacitances in series.
-  const er = heightM / section.sheets.reduce((sum, { thicknessM, dk }) => sum + thicknessM / dk, 0);
-  if (!outer || er < leastPermittivity || sheets.length === 0) return { cautions: [] };
+  const er = permittivityUnder(section);
+  if (section.planeAbove || er < leastPermittivity) return { cautions: [] };
   const u = widthM / heightM;
   const closed = microstripPermittivity(u, er);
+  const topHz = frequenciesHz[frequenciesHz.length - 1] ?? 0;
+  if (!isOuter(section)) {
+    const most = disperseMicrostrip(u, er, (topHz / 1e9) * (heightM * 1e3), closed, 1).effectivePermittivity;
+    const rise = most / closed - 1;
+    return { cautions: rise > buriedRise ? [buriedCaution(rise)] : [] };
+  }
   const disperse = (k: number, { effectivePermittivity, z0Ohm }: Propagation): Propagation => {
     const fn = (frequenciesHz[k]! / 1e9) * (heightM * 1e3);
     const dispersed = disperseMicrostrip(u, er, fn, closed, 1);
@@ -144,7 +162,6 @@ function dispersionOf(
       z0Ohm: z0Ohm * dispersed.z0Ohm,
     };
   };
-  const topHz = frequenciesHz[frequenciesHz.length - 1] ?? 0;
   const limitHz = dispersionLimitHz(section);
   const cautions =
     limitHz !== null && topHz > limitHz
