@@ -86,3 +86,12 @@ export function boxOf(points: readonly Point[]): Box | undefined {
 function tidy(value: number): number {
   return Math.round(value / sameM) / 1e9 + 0;
 }
+
+/** A way from a to b of at most three vertices: first at 45 degrees, then level or upright. */
+export function elbow(a: Point, b: Point): Point[] {
+  const [dx, dy] = wayTo(a, b);
+  const diagonal = Math.min(Math.abs(dx), Math.abs(dy));
+  const corner = tidyPoint([a[0] + Math.sign(dx) * diagonal, a[1] + Math.sign(dy) * diagonal]);
+  const all = [a, corner, b];
+  return all.filter((point, i) => i === 0 || !samePoint(point, all[i - 1]!));
+}

@@ -3,12 +3,13 @@ import {
   Component,
   computed,
   effect,
+  ElementRef,
   inject,
   input,
   untracked,
 } from '@angular/core';
 import { rxResource, takeUntilDestroyed, toSignal } from '@angular/core/rxjs-interop';
-import { ActivatedRoute, RouterLink } from '@angular/router';
+import { ActivatedRoute, Router, RouterLink } from '@angular/router';
 import type { Channel } from '@tollgate/contracts';
 import { filter, switchMap } from 'rxjs';
 import { ApiClient } from '../api/api-client';
@@ -29,6 +30,7 @@ import { UnreadTexts } from './entries/unread-texts';
 import { LedgerTable } from './ledger/ledger';
 import { LimitEditor } from './limits/limit-editor';
 import { Verdicts } from './limits/verdicts';
+import { Plan } from './plan/plan';
 import { Response } from './response/response';
 import { ChannelSaving } from './saving/channel-saving';
 import { DraftNote } from './saving/draft-note';
@@ -58,6 +60,7 @@ const sideTitles: Readonly<Record<Side, string>> = {
     LimitEditor,
     Loading,
     Page,
+    Plan,
     Response,
     RouterLink,
     Settings,
@@ -74,6 +77,8 @@ export class ChannelPage {
   private readonly api = inject(ApiClient);
   protected readonly check = inject(CheckRunner);
   private readonly query = toSignal(inject(ActivatedRoute).queryParamMap, { requireSync: true });
+  private readonly host = inject<ElementRef<HTMLElement>>(ElementRef);
+  private readonly router = inject(Router);
   protected readonly saving = inject(ChannelSaving);
   protected readonly store = inject(ChannelStore);
 
@@ -122,6 +127,17 @@ export class ChannelPage {
     if (event.target instanceof HTMLElement) event.target.dispatchEvent(new FocusEvent('blur'));
     if (again) this.store.redo();
     else this.store.undo();
+  }
+
+  /** From the plan to the fields of what is selected. */
+  protected async editFields(): Promise<void> {
+    await this.router.navigate([], {
+      queryParams: { side: null },
+      queryParamsHandling: 'merge',
+      replaceUrl: true,
+    });
+    const fields = this.host.nativeElement.querySelector('tg-element-form');
+    fields?.querySelector<HTMLElement>('input:enabled, select:enabled')?.focus();
   }
 
   protected leave(event: BeforeUnloadEvent): void {

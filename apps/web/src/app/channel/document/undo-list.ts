@@ -11,6 +11,9 @@ export interface Step {
 /** Edits of one field that follow each other faster than this are one step. */
 const together = 1500;
 
+/** Edits whose key begins so are one drag, and one step however long it takes. */
+export const dragKey = 'drag ';
+
 /** The list with an edit added; typing on in one field lengthens the last step. */
 export function withStep(
   steps: readonly Step[],
@@ -22,7 +25,7 @@ export function withStep(
   const back = compare(after, before, true);
   const forth = compare(before, after, true);
   const last = steps.at(-1);
-  if (last && key !== '' && last.key === key && at - last.at < together) {
+  if (last && key !== '' && last.key === key && (key.startsWith(dragKey) || at - last.at < together)) {
     const longer = { key, at, back: [...back, ...last.back], forth: [...last.forth, ...forth] };
     return [...steps.slice(0, -1), longer];
   }
