@@ -1,17 +1,11 @@
+import { mostPower, powerHigh, powerLow, productError } from './double-double';
+
 /** Powers of ten that a double holds exactly; with a mantissa up to 2^53 one operation rounds correctly. */
 const exactPowers = Float64Array.from({ length: 23 }, (_, k) => Number(`1e${k}`));
 
-/** Powers of ten as unevaluated sums of two doubles, for mantissas of up to 22 digits. */
-const mostPower = 60;
-const powerHigh = Float64Array.from({ length: mostPower + 1 }, (_, k) => Number(`1e${k}`));
-const powerLow = Float64Array.from({ length: mostPower + 1 }, (_, k) =>
-  Number(10n ** BigInt(k) - BigInt(powerHigh[k]!)),
-);
 /** Digits up to here go to the first part of a mantissa, which stays below 2^53. */
 const firstPart = 900719925474099;
 const mostLowDigits = 7;
-/** Veltkamp's splitter for doubles (T. J. Dekker, Numer. Math. 18, 1971). */
-const splitter = 134217729;
 
 /** Why a token is no number. */
 export type ScanFault = 'comma' | 'token';
@@ -35,17 +29,6 @@ function quotient(first: number, low: number, lowDigits: number, power: number):
   const value = q + correction;
   const left = correction - (value - q);
   return value + left * 1.000001 === value ? value : -1;
-}
-
-/** The rounding error of a product of two doubles: a b - product, exactly (Dekker). */
-function productError(a: number, b: number, product: number): number {
-  const ca = splitter * a;
-  const aHigh = ca - (ca - a);
-  const aLow = a - aHigh;
-  const cb = splitter * b;
-  const bHigh = cb - (cb - b);
-  const bLow = b - bHigh;
-  return aLow * bLow - (product - aHigh * bHigh - aLow * bHigh - aHigh * bLow);
 }
 
 /**
