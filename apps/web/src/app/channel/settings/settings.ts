@@ -12,6 +12,7 @@ import { ChannelStore } from '../document/channel-store';
 import { PickEntry } from '../entries/pick-entry';
 import { QuantityEntry } from '../entries/quantity-entry';
 import { TextEntry } from '../entries/text-entry';
+import { StackupChoice } from './stackup-choice';
 
 const reference: QuantityField = {
   dimension: 'resistance',
@@ -61,7 +62,7 @@ const gridWays = [
 /** What holds for the channel as a whole: signaling, references, rates, test points, grid. */
 @Component({
   selector: 'tg-settings',
-  imports: [PickEntry, QuantityEntry, TextEntry],
+  imports: [PickEntry, QuantityEntry, StackupChoice, TextEntry],
   changeDetection: ChangeDetectionStrategy.OnPush,
   templateUrl: './settings.html',
   styleUrl: './settings.scss',
