@@ -1,9 +1,9 @@
-import { impedanceOhm, flightS } from '../ladder';
-import { vacuumPermittivity } from '../medium';
-import { mediumAt, modelVia, runsOf, type ViaModel } from '../model';
-import { scatterOf } from '../scatter';
-import type { Piece } from '../sections';
-import { eightLayers, farthest, via } from '../testing/boards';
+import { impedanceOhm, flightS } from '../src/via/ladder';
+import { vacuumPermittivity } from '../src/via/medium';
+import { mediumAt, modelVia, runsOf, type ViaModel } from '../src/via/model';
+import { scatterOf } from '../src/via/scatter';
+import type { Piece } from '../src/via/sections';
+import { eightLayers, farthest, via } from '../src/via/testing/boards';
 import { scatterBySpice, withNgspice } from './ngspice';
 
 /** Lossless lines and capacitors of a single via. */
