@@ -1,4 +1,4 @@
-import { readFileSync, writeFileSync } from 'node:fs';
+import { closeSync, openSync, readFileSync, writeSync } from 'node:fs';
 import { join } from 'node:path';
 import { twoPortInto, type TwoPortKind } from '@tollgate/elements';
 import type { ElementOf } from '@tollgate/contracts';
@@ -9,7 +9,8 @@ import {
   type CascadePorts,
   type Network,
 } from '@tollgate/network';
-import { readTouchstone, writeTouchstone } from '@tollgate/touchstone';
+import { solveSection, type FieldSection } from '@tollgate/lines';
+import { readTouchstone, writeTouchstoneChunks } from '@tollgate/touchstone';
 
 /**
  * The jobs of the bench in this engine, one thread. Prints one line "job seconds" each, the median of several runs.
@@ -25,21 +26,28 @@ function randomS(ports: number, points: number): Float64Array {
   return Float64Array.from({ length: points * ports * ports * 2 }, () => (uniform() - 0.5) * 0.6);
 }
 
-function measure(job: string, work: () => void, runs: number): void {
+function median(work: () => void, runs: number): number {
   work();
   const times = Array.from({ length: runs }, () => {
     const started = performance.now();
     work();
     return (performance.now() - started) / 1000;
   }).sort((a, b) => a - b);
-  process.stdout.write(`${job} ${times[runs >> 1]}\n`);
+  return times[runs >> 1]!;
+}
+
+function print(job: string, seconds: number): void {
+  process.stdout.write(`${job} ${seconds}\n`);
 }
 
 function cascades(ports: CascadePorts, runs: number): void {
   const points = 2001;
   const sections = Array.from({ length: 20 }, () => randomS(ports, points));
   const out = new Float64Array(points * ports * ports * 2);
-  measure(`cascade-${ports}-ports-20x2001`, () => cascadeAll(sections, ports, points, out), runs);
+  print(
+    `cascade-${ports}-ports-20x2001`,
+    median(() => cascadeAll(sections, ports, points, out), runs),
+  );
 }
 
 const trialPoints = 500;
@@ -83,17 +91,57 @@ function longMeasurement(): Network {
   };
 }
 
+function writeNetwork(path: string, network: Network): void {
+  const file = openSync(path, 'w');
+  for (const bytes of writeTouchstoneChunks(network, { version: '1.1' })) writeSync(file, bytes);
+  closeSync(file);
+}
+
+const um = 1e-6;
+const outer = {
+  sheets: [{ thicknessM: 100 * um, dk: 4 }],
+  planeAbove: false,
+  trace: { widthM: 150 * um, thicknessM: 35 * um, etchAngleDeg: 70 },
+  traceAtM: 100 * um,
+} satisfies FieldSection;
+const strip: FieldSection = {
+  sheets: [
+    { thicknessM: 120 * um, dk: 3.8 },
+    { thicknessM: 140 * um, dk: 4.2 },
+  ],
+  planeAbove: true,
+  trace: { widthM: 110 * um, thicknessM: 17 * um, etchAngleDeg: 75 },
+  traceAtM: 120 * um,
+};
+const maskedPair: FieldSection = { ...outer, gapM: 150 * um, mask: { thicknessM: 20 * um, dk: 3.5 } };
+
+/** Cross-sections by the field solution: the slower of two single ones, and a pair under mask. */
+function crossSections(): void {
+  const single = Math.max(...[strip, outer].map((section) => median(() => solveSection(section), 5)));
+  print('crossSection', single);
+  print(
+    'crossSectionMaskedPair',
+    median(() => solveSection(maskedPair), 5),
+  );
+}
+
 function main(): void {
   const [path, folder] = process.argv.slice(2);
   if (!path || !folder) throw new Error('Name the file of the reading job and a folder.');
   const network = longMeasurement();
-  writeFileSync(path, writeTouchstone(network, { version: '1.1' }));
+  writeNetwork(path, network);
   cascades(2, 101);
   cascades(4, 51);
-  measure('trials-1000x20x500', trials, 5);
-  measure('read-4x10000', () => readTouchstone('long.s4p', readFileSync(path)), 7);
-  const written = join(folder, 'ours.s4p');
-  measure('write-4x10000', () => writeFileSync(written, writeTouchstone(network, { version: '1.1' })), 5);
+  print('trials', median(trials, 3));
+  print(
+    'read-4x10000',
+    median(() => readTouchstone('long.s4p', readFileSync(path)), 7),
+  );
+  print(
+    'write-4x10000',
+    median(() => writeNetwork(join(folder, 'ours.s4p'), network), 5),
+  );
+  crossSections();
 }
 
 main();

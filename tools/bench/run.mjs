@@ -6,12 +6,14 @@ import { fileURLToPath } from 'node:url';
 import { ensurePackages } from '../start/packages.mjs';
 
 /**
- * `npm run bench`: medians of this engine, of Debian's scikit-rf and of plain C compiled on the spot, side by side, one
- * after the other on one thread. What is not installed has no figure (null with `-- --json`).
+ * `npm run bench`: medians of this engine, of Debian's scikit-rf and of plain C compiled on the spot, side by side on one
+ * thread. This engine and C take turns for a few rounds, so that what else the machine does meets both. What is not installed
+ * has no figure (null with `-- --json`).
  */
 const root = join(dirname(fileURLToPath(import.meta.url)), '../..');
 const work = mkdtempSync(join(tmpdir(), 'tg-bench-'));
 const file = join(work, 'long.s4p');
+const rounds = 5;
 const oneThread = { OMP_NUM_THREADS: '1', OPENBLAS_NUM_THREADS: '1' };
 
 /** Runs one of the three programs; its lines "job seconds" as a map, or undefined where it cannot run here. */
@@ -33,7 +35,7 @@ function times(name, command, args) {
   );
 }
 
-async function ours() {
+async function bundled() {
   const { build } = await import('esbuild');
   const outfile = join(work, 'ours.mjs');
   await build({
@@ -46,12 +48,28 @@ async function ours() {
     tsconfig: join(root, 'tsconfig.base.json'),
     logLevel: 'warning',
   });
-  const found = times('This engine', process.execPath, [outfile, file, work]);
+  return outfile;
+}
+
+function ours(program) {
+  const found = times('This engine', process.execPath, [program, file, work]);
   if (!found) throw new Error('The bench of this engine does not run.');
   return found;
 }
 
-function plainC() {
+/** The median of each job over the rounds. */
+function middle(found) {
+  const jobs = [...(found[0]?.keys() ?? [])];
+  return new Map(
+    jobs.map((job) => [
+      job,
+      found.map((round) => round.get(job)).sort((a, b) => a - b)[Math.floor(found.length / 2)],
+    ]),
+  );
+}
+
+/** The path of the compiled program, or undefined where there is no compiler. */
+function compiledC() {
   const program = join(work, 'plain');
   const built = spawnSync('gcc', ['-O3', '-o', program, join(root, 'test/bench/plain.c'), '-lm'], {
     encoding: 'utf8',
@@ -60,7 +78,7 @@ function plainC() {
     console.error(`C is left out: ${built.error?.message ?? built.stderr}`);
     return undefined;
   }
-  return times('C', program, [file]);
+  return program;
 }
 
 function scikitRf() {
@@ -71,23 +89,34 @@ function scikitRf() {
 
 function table(rows) {
   const shown = (value) => (value === null ? '-' : `${(value * 1000).toFixed(2)} ms`).padStart(12);
-  const lines = rows.map((row) => row.job.padEnd(28) + shown(row.ours) + shown(row.scikitRf) + shown(row.c));
-  return [
-    `${'job'.padEnd(28)}${'ours'.padStart(12)}${'scikit-rf'.padStart(12)}${'C'.padStart(12)}`,
-    ...lines,
-  ].join('\n');
+  const ratio = (over, under) =>
+    (over === null || under === null ? '-' : (over / under).toFixed(2)).padStart(12);
+  const lines = rows.map(({ job, ours: own, scikitRf: python, c }) =>
+    [job.padEnd(28), shown(own), shown(python), shown(c), ratio(python, own), ratio(own, c)].join(''),
+  );
+  const heads = ['ours', 'scikit-rf', 'C', 'rf / ours', 'ours / C'].map((head) => head.padStart(12));
+  return ['job'.padEnd(28) + heads.join(''), ...lines].join('\n');
 }
 
 try {
   ensurePackages(root);
-  const engine = await ours();
-  const c = plainC();
+  const program = await bundled();
+  const plain = compiledC();
+  const engineRounds = [];
+  const cRounds = [];
+  for (let round = 0; round < rounds; round++) {
+    engineRounds.push(ours(program));
+    const c = plain && times('C', plain, [file]);
+    if (c) cRounds.push(c);
+  }
+  const engine = middle(engineRounds);
+  const c = middle(cRounds);
   const reference = scikitRf();
   const rows = [...engine].map(([job, seconds]) => ({
     job,
     ours: seconds,
     scikitRf: reference?.get(job) ?? null,
-    c: c?.get(job) ?? null,
+    c: c.get(job) ?? null,
   }));
   console.log(process.argv.includes('--json') ? JSON.stringify(rows) : table(rows));
 } finally {

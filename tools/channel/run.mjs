@@ -1,26 +1,38 @@
-// Runs apps/channel from a bundle that is made anew only when its sources changed: a check starts in a fraction of a second.
+// Runs apps/channel from a bundle that is made anew only when its sources changed, and from the machine code of the run before: a
+// check starts in a fraction of a second.
 import { createHash } from 'node:crypto';
-import { existsSync, mkdirSync, readdirSync, readFileSync, renameSync, rmSync } from 'node:fs';
+import {
+  existsSync,
+  mkdirSync,
+  readdirSync,
+  readFileSync,
+  renameSync,
+  rmSync,
+  statSync,
+  writeFileSync,
+} from 'node:fs';
+import { createRequire } from 'node:module';
 import { dirname, join, resolve } from 'node:path';
-import { fileURLToPath, pathToFileURL } from 'node:url';
+import { fileURLToPath } from 'node:url';
+import { Script } from 'node:vm';
 
 const root = resolve(dirname(fileURLToPath(import.meta.url)), '../..');
 const built = process.env.TOLLGATE_BUILD
   ? resolve(process.env.TOLLGATE_BUILD, 'channel')
   : join(root, 'dist/channel');
 
-function sourcesIn(folder) {
-  return readdirSync(folder, { withFileTypes: true, recursive: true })
-    .filter((entry) => entry.isFile() && entry.name.endsWith('.ts') && !entry.name.endsWith('.spec.ts'))
-    .map((entry) => join(entry.parentPath ?? entry.path, entry.name))
-    .sort();
-}
-
+/** Names, sizes and times of change: a tenth of the time that reading every source takes. */
 function stamp() {
   const hash = createHash('sha256');
-  const sources = [...sourcesIn(join(root, 'libs')), ...sourcesIn(join(root, 'apps/channel'))];
-  for (const file of [...sources, join(root, 'package-lock.json'), fileURLToPath(import.meta.url)]) {
-    hash.update(file.slice(root.length)).update('\0').update(readFileSync(file)).update('\0');
+  const folders = ['libs', 'apps/channel'].map((folder) => join(root, folder));
+  const sources = folders.flatMap((folder) =>
+    readdirSync(folder, { recursive: true })
+      .filter((name) => name.endsWith('.ts') && !name.endsWith('.spec.ts'))
+      .map((name) => join(folder, name)),
+  );
+  for (const file of [...sources.sort(), join(root, 'package-lock.json'), fileURLToPath(import.meta.url)]) {
+    const { size, mtimeMs } = statSync(file);
+    hash.update(`${file.slice(root.length)} ${size} ${mtimeMs}\n`);
   }
   return hash.digest('hex').slice(0, 16);
 }
@@ -28,7 +40,7 @@ function stamp() {
 async function bundle(target) {
   const { build } = await import('esbuild');
   mkdirSync(built, { recursive: true });
-  const unfinished = `${target}.${process.pid}.tmp`;
+  const unfinished = unfinishedOf(target);
   await build({
     entryPoints: [join(root, 'apps/channel/src/main.ts')],
     outfile: unfinished,
@@ -44,14 +56,36 @@ async function bundle(target) {
   renameSync(unfinished, target);
   for (const old of readdirSync(built)) {
     const path = join(built, old);
-    if (path !== target && old.startsWith('channel-') && old.endsWith('.cjs')) rmSync(path, { force: true });
+    if (path !== target && /^channel-.*\.(cjs|code)$/.test(old)) rmSync(path, { force: true });
+  }
+}
+
+function unfinishedOf(path) {
+  return `${path}.${process.pid}.tmp`;
+}
+
+/** Runs the bundle as a module. V8 takes the code it kept only where its version and flags are the same, else compiles anew. */
+function run(target) {
+  const kept = target.replace(/cjs$/, 'code');
+  const cachedData = existsSync(kept) ? readFileSync(kept) : undefined;
+  const source = `(function (require) {${readFileSync(target, 'utf8')}\n})`;
+  const script = new Script(source, { filename: target, cachedData });
+  script.runInThisContext()(createRequire(target));
+  if (cachedData && !script.cachedDataRejected) return;
+  // After the run, so that it holds what the run has compiled.
+  try {
+    writeFileSync(unfinishedOf(kept), script.createCachedData());
+    renameSync(unfinishedOf(kept), kept);
+  } catch (error) {
+    // The check is done and told; where the folder cannot be written, the next one starts a little later.
+    if (!['EACCES', 'EROFS', 'ENOSPC', 'EPERM'].includes(error.code)) throw error;
   }
 }
 
 try {
   const target = join(built, `channel-${stamp()}.cjs`);
   if (!existsSync(target)) await bundle(target);
-  await import(pathToFileURL(target).href);
+  run(target);
 } catch (error) {
   // 1 would say that the channel exceeds a limit.
   process.exitCode = 2;
