@@ -4,7 +4,8 @@ import { mediumAt, modelVia, runsOf, type ViaModel } from '../src/via/model';
 import { scatterOf } from '../src/via/scatter';
 import type { Piece } from '../src/via/sections';
 import { eightLayers, farthest, via } from '../src/via/testing/boards';
-import { scatterBySpice, withNgspice } from './ngspice';
+import { describeWith, ngspice } from '../../../test/support/needs';
+import { scatterBySpice } from './ngspice';
 
 /** Lossless lines and capacitors of a single via. */
 function losslessCircuit(model: ViaModel): string[] {
@@ -113,7 +114,7 @@ function matrixOf({ modes, angleRad }: Piece): [number, number, number] {
   ];
 }
 
-withNgspice('ngspice, the same sections as a ladder', () => {
+describeWith(ngspice, 'ngspice, the same sections as a ladder', () => {
   it.each([
     ['with a stub below', via()],
     ['with pads', via({ padM: 0.45e-3 })],

@@ -1,13 +1,8 @@
 import { spawnSync } from 'node:child_process';
-import { existsSync, mkdtempSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
+import { mkdtempSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
-
-export const ngspice = '/usr/bin/ngspice';
-
-/** Tests against ngspice (Debian's package) are named as skipped where it is missing, and fail where everything is required. */
-export const withNgspice =
-  existsSync(ngspice) || process.env['TOLLGATE_REQUIRE_ALL'] === '1' ? describe : describe.skip;
+import { ngspice } from '../../../test/support/needs';
 
 /**
  * S parameters of a circuit by ngspice's .sp analysis.
@@ -41,7 +36,7 @@ export function scatterBySpice(
         '',
       ].join('\n'),
     );
-    const run = spawnSync(ngspice, ['-b', 'via.cir'], { cwd: folder, encoding: 'utf8' });
+    const run = spawnSync(ngspice.path, ['-b', 'via.cir'], { cwd: folder, encoding: 'utf8' });
     if (run.error) throw run.error;
     if (!existsSync(join(folder, 's.txt'))) throw new Error(`${run.stdout}\n${run.stderr}`);
     return tableOf(readFileSync(join(folder, 's.txt'), 'utf8'));

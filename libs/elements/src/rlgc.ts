@@ -5,8 +5,8 @@ import { writeSymmetric } from './symmetric';
 
 const root = new Float64Array(2);
 
-/** Below this |gamma l|^2 a line is short: cosh and sinh by their series, good to the last digit with four terms. */
-const shortSquare = 1e-3;
+/** Below this |gamma l|^4 a line is short: cosh and sinh by their series, good to the last digit with four terms. */
+const shortFourth = 1e-6;
 
 /**
  * A uniform line by its constants per length: gamma = sqrt((R + jwL)(G + jwC)), Zc = sqrt((R + jwL)/(G + jwC)) (Pozar 2.5, 2.7).
@@ -46,7 +46,7 @@ export function immittanceLineInto(
   const square = lengthM * lengthM;
   const gRe2 = (zRe * yRe - zIm * yIm) * square;
   const gIm2 = (zRe * yIm + zIm * yRe) * square;
-  if (Math.hypot(gRe2, gIm2) < shortSquare) {
+  if (gRe2 * gRe2 + gIm2 * gIm2 < shortFourth) {
     shortInto(out, at, zRe, zIm, yRe, yIm, lengthM, referenceOhm, gRe2, gIm2);
     return;
   }

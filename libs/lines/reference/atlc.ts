@@ -2,7 +2,7 @@ import { spawnSync } from 'node:child_process';
 import { mkdtempSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
-import { atlc } from '../../../../../test/support/needs';
+import { atlc } from '../../../test/support/needs';
 
 /** What a pixel is made of: ground, the trace, the other trace of a pair, or a dielectric. */
 export type Pixel = 'ground' | 'trace' | 'other' | number;

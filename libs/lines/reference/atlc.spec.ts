@@ -1,7 +1,7 @@
-import { atlc, describeWith } from '../../../../../test/support/needs';
-import type { FieldSection } from '../section';
-import { solveSection } from '../solve';
-import { outer, share, strip, um } from '../testing/sections';
+import { atlc, describeWith } from '../../../test/support/needs';
+import type { FieldSection } from '../src/field/section';
+import { solveSection } from '../src/field/solve';
+import { outer, share, strip, um } from '../src/field/testing/sections';
 import { atlcImpedances, type Pixel } from './atlc';
 
 /** Impedances at two pixel sizes, the finer half the coarser, drawn out to none: their error falls as the size to the power 4/3. */

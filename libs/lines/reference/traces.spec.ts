@@ -1,11 +1,11 @@
 import { readFileSync } from 'node:fs';
-import { describeWith, isThere, referenceData } from '../../../../../test/support/needs';
-import type { Dielectric } from '../../dielectric';
-import type { ModeName } from '../../models';
-import { lineOfField } from '../line-of-field';
-import type { FieldSection } from '../section';
-import { solveSection } from '../solve';
-import { share } from '../testing/sections';
+import { describeWith, isThere, referenceData } from '../../../test/support/needs';
+import type { Dielectric } from '../src/dielectric';
+import type { ModeName } from '../src/models';
+import { lineOfField } from '../src/field/line-of-field';
+import type { FieldSection } from '../src/field/section';
+import { solveSection } from '../src/field/solve';
+import { share } from '../src/field/testing/sections';
 
 /** Cross-sections and their finite-element solution, beside the checkout. */
 const traces = referenceData('traces.json');
