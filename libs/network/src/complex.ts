@@ -40,7 +40,9 @@ export function complexMultiply(
 
 /** out = principal square root (real part from 0 up). */
 export function complexSqrt(out: Float64Array, at: number, re: number, im: number): void {
-  const size = Math.hypot(re, im);
+  // Math.hypot allocates; it is left to what would overflow or vanish when squared.
+  let size = Math.sqrt(re * re + im * im);
+  if (!(size > 1e-140 && size < 1e140)) size = Math.hypot(re, im);
   if (size === 0) {
     out[at] = 0;
     out[at + 1] = 0;
