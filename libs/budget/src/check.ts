@@ -55,10 +55,10 @@ function checked(chain: Chain): Check {
   const { channel, context, coverage } = chain;
   const band = commonBand(coverage);
   if (!band) throw new CheckRefused([noCommonBand(coverage)]);
-  const delayS = channel.elements.reduce(
-    (sum, element, i) => sum + ofElement(i, () => elementDelayS(element, context)),
-    0,
+  const elementDelaysS = channel.elements.map((element, i) =>
+    ofElement(i, () => elementDelayS(element, context)),
   );
+  const delayS = elementDelaysS.reduce((sum, each) => sum + each, 0);
   const grid = gridOf(channel, delayS);
   const covered = grid.frequenciesHz.filter((f) => f >= band[0] && f <= band[1]);
   const { network, facts, trappedPoints } = evaluateChain(chain, covered, true);
@@ -101,6 +101,7 @@ function checked(chain: Chain): Check {
       ...trappedWarning(trappedPoints),
     ],
     delayS,
+    elementDelaysS,
   };
 }
 

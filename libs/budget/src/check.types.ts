@@ -45,6 +45,7 @@ export interface Check {
   readonly warnings: readonly Warning[];
   /** One-way delay by length and permittivity, over all elements. */
   readonly delayS: number;
+  readonly elementDelaysS: readonly number[];
 }
 
 export type CheckResult =

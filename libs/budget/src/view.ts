@@ -35,6 +35,7 @@ export function toView(check: Check, fingerprint: string): CheckView {
     nyquistHz: nyquistHz(channel),
     temperatureC: channel.stackup?.temperatureC,
     delayS: check.delayS,
+    elementDelaysS: [...check.elementDelaysS],
     frequenciesHz: Array.from(network.frequenciesHz),
     curves: curvesOf(check),
     limits: channel.limits.map((_, i) => limitViewOf(check, i)),

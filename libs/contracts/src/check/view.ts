@@ -54,6 +54,8 @@ export const checkView = z.object({
   nyquistHz: z.number().optional(),
   temperatureC: z.number().optional(),
   delayS: z.number().nullable(),
+  /** One-way delay of each element, in the order of the channel. */
+  elementDelaysS: z.array(z.number()),
   frequenciesHz: z.array(z.number()),
   /** SDD for a differential channel; positive dB, null where nothing is transmitted. */
   curves: z.object({ insertionLossDb: curve, returnLossNearDb: curve, returnLossFarDb: curve }),
