@@ -46,7 +46,7 @@ export interface Room {
 }
 
 /** A part without a length of its own is given this much, so that it can be seen and hit. */
-const leastWidth = 16;
+const leastWidth = 14;
 
 /** The channel unrolled: electrical distance from left to right, the stackup in scale from top to bottom. */
 export function sectionLayout(

@@ -4,7 +4,7 @@ import { CheckRunner } from '../document/check-runner';
 import { callOf } from '../elements/element-words';
 import { sectionLayout, type Room } from './section-layout';
 
-const room: Room = { width: 860, top: 38, height: 74, impedanceTop: 8, impedanceHeight: 20 };
+const room: Room = { width: 640, top: 38, height: 74, impedanceTop: 8, impedanceHeight: 20 };
 
 /** The channel unrolled over its stackup in scale: traces on their layers, barrels across them, stubs hanging off. */
 @Component({
