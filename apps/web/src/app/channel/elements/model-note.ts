@@ -15,6 +15,12 @@ import { modelLines } from './model-lines';
     }
   `,
   styles: `
+    h3 {
+      margin: 10px 0 2px;
+      padding-top: 8px;
+      border-top: 1px solid var(--tg-rule);
+      font-size: var(--tg-text-small);
+    }
     p {
       margin: 2px 0;
       color: var(--tg-slate);
