@@ -130,8 +130,8 @@ function main(): void {
   if (!path || !folder) throw new Error('Name the file of the reading job and a folder.');
   const network = longMeasurement();
   writeNetwork(path, network);
-  cascades(2, 101);
-  cascades(4, 51);
+  cascades(2, 401);
+  cascades(4, 101);
   print('trials', median(trials, 3));
   print(
     'read-4x10000',

@@ -1,14 +1,14 @@
 import { spawnSync } from 'node:child_process';
 import { existsSync, mkdtempSync, rmSync } from 'node:fs';
-import { tmpdir } from 'node:os';
+import { availableParallelism, tmpdir } from 'node:os';
 import { dirname, join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { ensurePackages } from '../start/packages.mjs';
 
 /**
  * `npm run bench`: medians of this engine, of Debian's scikit-rf and of plain C compiled on the spot, side by side on one
- * thread. This engine and C take turns for a few rounds, so that what else the machine does meets both. What is not installed
- * has no figure (null with `-- --json`).
+ * thread. This engine and C take turns for a few rounds, and all three stay on the processor where C is fastest just now, so that
+ * what else the machine does meets them alike. What is not installed has no figure (null with `-- --json`).
  */
 const root = join(dirname(fileURLToPath(import.meta.url)), '../..');
 const work = mkdtempSync(join(tmpdir(), 'tg-bench-'));
@@ -16,9 +16,13 @@ const file = join(work, 'long.s4p');
 const rounds = 5;
 const oneThread = { OMP_NUM_THREADS: '1', OPENBLAS_NUM_THREADS: '1' };
 
+/** Words before a command that keep it on one processor; none where that cannot be chosen. */
+let kept = [];
+
 /** Runs one of the three programs; its lines "job seconds" as a map, or undefined where it cannot run here. */
 function times(name, command, args) {
-  const { status, stdout, stderr, error } = spawnSync(command, args, {
+  const [first, ...words] = [...kept, command, ...args];
+  const { status, stdout, stderr, error } = spawnSync(first, words, {
     encoding: 'utf8',
     env: { ...process.env, ...oneThread },
   });
@@ -55,6 +59,21 @@ function ours(program) {
   const found = times('This engine', process.execPath, [program, file, work]);
   if (!found) throw new Error('The bench of this engine does not run.');
   return found;
+}
+
+/** Keeps what follows on the processor that runs C's first job fastest: a busy twin of a core slows programs by unequal shares. */
+function choosePlace(plain) {
+  if (spawnSync('taskset', ['--version']).status !== 0) return;
+  const places = Array.from({ length: availableParallelism() }, (_unused, cpu) => [
+    'taskset',
+    '-c',
+    `${cpu}`,
+  ]);
+  const speeds = places.map((place) => {
+    kept = place;
+    return times('C', plain, ['probe'])?.values().next().value ?? Infinity;
+  });
+  kept = places[speeds.indexOf(Math.min(...speeds))];
 }
 
 /** The median of each job over the rounds. */
@@ -102,6 +121,7 @@ try {
   ensurePackages(root);
   const program = await bundled();
   const plain = compiledC();
+  if (plain) choosePlace(plain);
   const engineRounds = [];
   const cRounds = [];
   for (let round = 0; round < rounds; round++) {
