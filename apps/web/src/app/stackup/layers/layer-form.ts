@@ -3,10 +3,12 @@ import type { Layer } from '@tollgate/contracts';
 import { PickEntry } from '../../channel/entries/pick-entry';
 import { QuantityEntry } from '../../channel/entries/quantity-entry';
 import { TextEntry } from '../../channel/entries/text-entry';
+import { WrittenEntry } from '../../channel/entries/written-entry';
 import { withLayer, withValue } from '../document/layer-edits';
 import { heightField, layerFields, type LayerField } from '../document/layer-fields';
 import { StackupStore } from '../document/stackup-store';
 import type { LayerRow } from '../document/stackup-rows';
+import { readPoints, writePoints } from './further-points';
 
 type Copper = Extract<Layer, { kind: 'copper' }>;
 type Roughness = NonNullable<Copper['roughness']>;
@@ -43,7 +45,7 @@ const models = [
 /** The rarer values of a layer: tolerances, dispersion and source; of copper its foil, roughness and etching. */
 @Component({
   selector: 'tg-layer-form',
-  imports: [PickEntry, QuantityEntry, TextEntry],
+  imports: [PickEntry, QuantityEntry, TextEntry, WrittenEntry],
   changeDetection: ChangeDetectionStrategy.OnPush,
   templateUrl: './layer-form.html',
   styleUrl: './layer-form.scss',
@@ -84,11 +86,17 @@ export class LayerForm {
     return roughness && facesOf(roughness);
   });
 
+  protected readonly readPoints = readPoints;
+  protected readonly pointsText = computed(() => writePoints(this.dielectric()?.furtherPoints));
+
   protected value(name: LayerField): number | undefined {
     return (this.layer() as unknown as Record<string, number | undefined>)[name];
   }
 
-  protected set(field: LayerField | 'dispersion' | 'foilSide' | 'source', value: unknown): void {
+  protected set(
+    field: LayerField | 'dispersion' | 'foilSide' | 'furtherPoints' | 'source',
+    value: unknown,
+  ): void {
     this.change(field, (layer) => withValue(layer, field, value));
   }
 
