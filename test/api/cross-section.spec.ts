@@ -1,4 +1,5 @@
 import type { TestClient } from '../support/client';
+import { channelDocument } from '../support/fixtures';
 import { TestServer } from '../support/server';
 import { stackupLayers } from '../support/stackups';
 
@@ -78,6 +79,33 @@ describe('the cross-section desk', () => {
     expect(await count()).toBe(before);
     await ask({ widthM: '132 um', sensitivities: false });
     expect(await count()).toBe(before + 1);
+  });
+
+  it('shares a section that a check has solved, and a check takes one that it has solved', async () => {
+    const kept = async () =>
+      (await server.server.sequelize.query('SELECT sha256, created_at FROM section_solutions'))[0].length;
+    const board = (await engineer.post('/api/boards', { name: 'Shared sections' })).body;
+    const made = await engineer.post(`/api/revisions/${board.revisions[0].id}/channels`, {
+      document: channelDocument({
+        stackup: { layers: stackupLayers() },
+        elements: [{ kind: 'trace', layer: 'L3', widthM: '141 um', lengthM: '20 mm' }],
+      }),
+    });
+    const check = async (widthM: string) => {
+      const document = structuredClone(made.body.document);
+      document.elements[0].widthM = widthM;
+      return engineer.post(`/api/channels/${made.body.id}/check`, { document });
+    };
+    expect((await check('142 um')).status).toBe(200);
+    const after = await kept();
+    // The desk finds what the check solved, and the check what the desk did: nothing is kept twice.
+    await ask({ widthM: '142 um', sensitivities: false });
+    expect(await kept()).toBe(after);
+    await ask({ widthM: '143 um', sensitivities: false });
+    expect(await kept()).toBe(after + 1);
+    const { body } = await check('143 um');
+    expect(await kept()).toBe(after + 1);
+    expect((body.view ?? body).models[0]).toMatchObject({ kind: 'trace' });
   });
 
   it.each([

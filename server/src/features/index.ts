@@ -21,7 +21,7 @@ import {
   createResolveChannel,
   planRoutes,
 } from './channels';
-import { CheckPool, createChecksRepository } from './checks';
+import { CheckPool, createChecksRepository, createSectionsRepository, SectionStore } from './checks';
 import { demoMailRoutes } from './demo-mail';
 import { eventsRoutes } from './events';
 import { createFilesRepository, createFilesService, fileRoutes } from './files';
@@ -32,7 +32,6 @@ import { createPassport, createThrottle, sessionRoutes } from './session';
 import { sheetRoutes } from './sheets';
 import {
   createFollowStackup,
-  createSectionsRepository,
   createStackupsRepository,
   createStackupsService,
   createUseStackup,
@@ -52,7 +51,9 @@ export function createFeatures(config: Config, clock: Clock, sequelize: Sequeliz
   const jobs = new JobRunner(sequelize, clock, handlers);
   const unitOfWork = createUnitOfWork(sequelize, clock, () => jobs.wake());
   const store = new FileStore(config.dataDirectory);
-  const pool = new CheckPool(config.checkThreads);
+  const sectionRows = createSectionsRepository(sequelize);
+  const sections = new SectionStore(sectionRows, unitOfWork);
+  const pool = new CheckPool(config.checkThreads, sections);
   const feed = new ChangeFeed(sequelize);
 
   const people = createPeopleService({
@@ -70,8 +71,7 @@ export function createFeatures(config: Config, clock: Clock, sequelize: Sequeliz
   const drafts = createDraftEvents(channelRows, unitOfWork);
   const resolve = createResolveChannel(files, masks);
   const stackupRows = createStackupsRepository(sequelize);
-  const sections = createSectionsRepository(sequelize);
-  const desk = new DeskService({ sections, unitOfWork });
+  const desk = new DeskService(sections);
   const channels = createChannelsService({
     config,
     repository: channelRows,
@@ -113,7 +113,7 @@ export function createFeatures(config: Config, clock: Clock, sequelize: Sequeliz
     await throttle.sweep();
     await feed.sweep(new Date(now.getTime() - dayMs));
     await checks.sweep(new Date(now.getTime() - dayMs));
-    await sections.sweep(new Date(now.getTime() - 90 * dayMs));
+    await sectionRows.sweep(new Date(now.getTime() - 90 * dayMs));
     await jobs.sweep(new Date(now.getTime() - 7 * dayMs));
     await jobs.queue('sweep', {}, 'sweep-next', new Date(now.getTime() + dayMs));
   });

@@ -1,4 +1,6 @@
 import type { ChannelVerdict, CompleteChannel, FieldProblem, Standing } from '@tollgate/contracts';
+import type { SolvedSection } from '@tollgate/elements';
+import type { SectionHelp } from './section-store';
 
 /** A part as a check names it: the key in the channel, and which file it is. */
 export interface TaskPart {
@@ -17,6 +19,8 @@ export interface CheckTask {
   readonly form: 'view' | 'response';
   /** One shared number, not 0 once a newer check has taken this one's place. */
   readonly flag: Int32Array<SharedArrayBuffer>;
+  /** Solved cross-sections of its traces, and which of them to hand back. */
+  readonly sections: SectionHelp;
 }
 
 /** Columns that lists and filters need of a check. */
@@ -40,5 +44,5 @@ export interface CheckOutcome {
 /** `superseded`: the flag was raised, and the thread left off. */
 export type TaskResult =
   | { readonly ok: false; readonly superseded: true }
-  | { readonly ok: true; readonly outcome: CheckOutcome }
+  | { readonly ok: true; readonly outcome: CheckOutcome; readonly solved: readonly SolvedSection[] }
   | { readonly ok: false; readonly superseded: false; readonly problems: readonly FieldProblem[] };

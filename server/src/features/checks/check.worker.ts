@@ -10,6 +10,7 @@ import {
   type Part,
 } from '@tollgate/budget';
 import type { CheckView } from '@tollgate/contracts';
+import { solvedSectionOf, takeInSolved, type SolvedSection } from '@tollgate/elements';
 import { FileStore } from '../../platform/files';
 import { readParsed } from '../files/part-store';
 import type { CheckSummary, CheckTask, TaskPart, TaskResult } from './check-task';
@@ -23,6 +24,7 @@ const cache = createCheckCache();
 export default async function runCheck(task: CheckTask): Promise<TaskResult> {
   const store = new FileStore(task.dataDirectory);
   const parts = new Map<string, Part>();
+  task.sections.known.forEach(takeInSolved);
   for (const part of task.parts) parts.set(part.key, await hold(store, part));
   try {
     return outcomeOf(task, parts);
@@ -39,7 +41,16 @@ function outcomeOf(task: CheckTask, parts: ReadonlyMap<string, Part>): TaskResul
   const fingerprint = createHash('sha256').update(canonicalBytes(task.channel, parts)).digest('hex');
   const view = toView(result.check, fingerprint);
   const json = JSON.stringify(task.form === 'view' ? view : toResponse(result.check, fingerprint));
-  return { ok: true, outcome: { fingerprint, engine: engineVersion, summary: summaryOf(view), json } };
+  const outcome = { fingerprint, engine: engineVersion, summary: summaryOf(view), json };
+  return { ok: true, outcome, solved: solvedOf(task) };
+}
+
+/** The check has solved them: they are only read here. */
+function solvedOf({ channel, sections }: CheckTask): SolvedSection[] {
+  return sections.wanted.flatMap((i) => {
+    const element = channel.elements[i];
+    return element?.kind === 'trace' ? [solvedSectionOf(channel.stackup, element)] : [];
+  });
 }
 
 async function hold(store: FileStore, { sha256, name }: TaskPart): Promise<Part> {

@@ -12,18 +12,11 @@ import { ElementError, sectionKeyOf, type SolvedSection } from '@tollgate/elemen
 import { problems, type Caller } from '../../platform/http';
 import { errorFacts, log } from '../../platform/log';
 import { workerFile } from '../../platform/threads';
-import { theProduct, type UnitOfWork } from '../../platform/work';
-import { CheckQueue } from '../checks';
+import { CheckQueue, type SectionStore } from '../checks';
 import type { DeskReply, DeskResult, DeskTask } from './desk-task';
-import type { SectionsRepository } from './sections.repository';
 import { below } from './stackups.service';
 
 const mostRemembered = 500;
-
-interface Needs {
-  readonly sections: SectionsRepository;
-  readonly unitOfWork: UnitOfWork;
-}
 
 /**
  * The cross-section desk. A question is answered from memory where it was asked before, else in a thread of its own that
@@ -38,9 +31,8 @@ export class DeskService {
   });
   private readonly queue = new CheckQueue(1);
   private readonly remembered = new Map<string, CrossSection | Synthesis>();
-  private readonly kept = new Set<string>();
 
-  constructor(private readonly needs: Needs) {
+  constructor(private readonly sections: SectionStore) {
     // A thread that dies outside a task is replaced by the pool; without a listener it would take the process along.
     this.pool.on('error', (error: unknown) => log('error', 'desk thread', errorFacts(error)));
   }
@@ -76,7 +68,7 @@ export class DeskService {
     const result = await this.queue.add(caller.id, `${caller.id}:${what}`, run);
     if (!result.ok) throw problems.unprocessable(result.problems);
     this.remember(key, result.reply);
-    if (helped.kind === 'synthesis' || !helped.known) await this.keep(result.solved);
+    await this.sections.keep([result.solved]);
     return result.reply as DeskReply<Task>;
   }
 
@@ -85,18 +77,11 @@ export class DeskService {
     input: Parameters<typeof sectionKeyOf>[1],
   ): Promise<SolvedSection | undefined> {
     try {
-      return await this.needs.sections.find(sectionKeyOf(stackup, input));
+      return await this.sections.find(sectionKeyOf(stackup, input));
     } catch (error) {
       if (error instanceof ElementError) throw problems.unprocessable([error.problem]);
       throw error;
     }
-  }
-
-  private async keep(solved: SolvedSection): Promise<void> {
-    if (this.kept.has(solved.key)) return;
-    await this.needs.unitOfWork(theProduct, (work) => this.needs.sections.keep(work, solved));
-    if (this.kept.size >= 10 * mostRemembered) this.kept.clear();
-    this.kept.add(solved.key);
   }
 
   private remember(key: string, reply: CrossSection | Synthesis): void {

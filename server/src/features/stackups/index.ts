@@ -1,6 +1,5 @@
 export { DeskService } from './desk.service';
 export { createFollowStackup } from './following';
-export { createSectionsRepository } from './sections.repository';
 export { createStackupsRepository } from './stackups.repository';
 export { stackupRoutes } from './stackups.routes';
 export { createStackupsService, type StackupsService } from './stackups.service';

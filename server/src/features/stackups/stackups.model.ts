@@ -17,13 +17,6 @@ export interface StackupRow {
   createdBy: string | null;
 }
 
-export interface SolutionRow {
-  sha256: string;
-  engine: string;
-  solution: string;
-  createdAt: Date;
-}
-
 export function defineStackups(sequelize: Sequelize): Table<StackupRow> {
   return sequelize.define('stackup_versions', {
     id: column.id,
@@ -35,14 +28,5 @@ export function defineStackups(sequelize: Sequelize): Table<StackupRow> {
     sha256: column.hash,
     createdAt: column.instant,
     createdBy: column.reference,
-  });
-}
-
-export function defineSolutions(sequelize: Sequelize): Table<SolutionRow> {
-  return sequelize.define('section_solutions', {
-    sha256: { ...column.hash, primaryKey: true },
-    engine: column.text,
-    solution: column.longText,
-    createdAt: column.instant,
   });
 }

@@ -2,14 +2,26 @@ import { createHash } from 'node:crypto';
 import { Op, type Sequelize } from 'sequelize';
 import { engineVersion } from '@tollgate/budget';
 import type { SolvedSection } from '@tollgate/elements';
-import type { Work } from '../../platform/work';
-import { defineSolutions } from './stackups.model';
+import { column } from '../../platform/database';
+import type { Table, Work } from '../../platform/work';
+
+interface SolutionRow {
+  sha256: string;
+  engine: string;
+  solution: string;
+  createdAt: Date;
+}
 
 export type SectionsRepository = ReturnType<typeof createSectionsRepository>;
 
 /** Solved cross-sections by their content: what one thread or node has solved, the others need not. */
 export function createSectionsRepository(sequelize: Sequelize) {
-  const solutions = defineSolutions(sequelize);
+  const solutions: Table<SolutionRow> = sequelize.define('section_solutions', {
+    sha256: { ...column.hash, primaryKey: true },
+    engine: column.text,
+    solution: column.longText,
+    createdAt: column.instant,
+  });
   return {
     async find(key: string): Promise<SolvedSection | undefined> {
       const row = await solutions.findByPk(addressOf(key));
