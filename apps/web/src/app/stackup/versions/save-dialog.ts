@@ -25,6 +25,9 @@ export interface SaveDialogData {
 /** The version as it was stored, or one that someone else saved in the meantime. */
 export type SaveOutcome = { readonly saved: StackupVersion } | { readonly overtaken: StackupVersion };
 
+/** What a person answers; the document comes from the screen. */
+const answers = api.stackupCreate.omit({ document: true });
+
 /** Saves the next version: what it speaks of, and why it is made. */
 @Component({
   selector: 'tg-save-dialog',
@@ -76,7 +79,7 @@ export class SaveDialog {
     value,
     title: api.stackupKindTitles[value],
   }));
-  protected readonly form = formOf(api.stackupCreate, { kind: this.data.kind, why: '' });
+  protected readonly form = formOf(answers, { kind: this.data.kind, why: '' });
   protected readonly submission = new Submission(this.form);
 
   dirty(): boolean {
@@ -87,7 +90,7 @@ export class SaveDialog {
     const { revisionId, seen, stackup } = this.data;
     this.submission.send(
       () => {
-        const body = { ...requestOf(api.stackupCreate, this.form), document: stackup };
+        const body = { ...requestOf(answers, this.form), document: stackup };
         return this.api.post<StackupVersion>(`/revisions/${revisionId}/stackups`, body, seen).pipe(
           catchError((error: unknown) => {
             const { status, problem } = apiProblemOf(error);
