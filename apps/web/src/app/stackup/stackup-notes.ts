@@ -15,7 +15,7 @@ import { StackupStore } from './document/stackup-store';
       <div class="note warn" role="alert">
         <p>
           <strong>{{ theirs.createdBy }} saved version {{ theirs.number }} in the meantime:</strong>
-          {{ theirs.why }} Yours is kept in this browser and not saved.
+          “{{ theirs.why }}” Yours is kept in this browser and not saved.
         </p>
         <ul>
           @for (change of apart(); track $index) {

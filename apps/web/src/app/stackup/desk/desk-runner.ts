@@ -30,7 +30,7 @@ export class DeskRunner {
   private readonly store = inject(StackupStore);
   private readonly again = new Subject<void>();
   private readonly asked = signal<DeskQuestion>(startQuestion);
-  private readonly answered = signal<{ section: CrossSection; of: unknown } | undefined>(undefined);
+  private readonly answered = signal<{ section: CrossSection; of: DeskQuestion } | undefined>(undefined);
   private readonly said = signal('');
   private readonly told = signal<readonly FieldProblem[]>([]);
 
@@ -47,6 +47,8 @@ export class DeskRunner {
   });
   /** The last answer; what shows while a newer one is on its way or cannot be given. */
   readonly section = computed(() => this.answered()?.section);
+  /** The question the last answer is of. */
+  readonly answeredQuestion = computed(() => this.answered()?.of ?? this.question());
   readonly behind = computed(() => this.answered() !== undefined && this.answered()!.of !== this.request());
   /** Why there is no answer to the question as it stands. */
   readonly failure = this.said.asReadonly();

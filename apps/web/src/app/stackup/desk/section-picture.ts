@@ -48,7 +48,7 @@ export function pictureOf({ drawing }: { readonly drawing: SectionDrawing }): Pi
     heightPx,
     sheets: drawing.sheets.map((sheet) => ({
       ...span(sheet),
-      words: `${sheet.layer}, Dk ${sheet.dk}`,
+      words: `${shortened(sheet.layer)}, Dk ${sheet.dk}`,
       labelled: (sheet.toM - sheet.fromM) * pxPerM >= labelPx,
     })),
     planes: drawing.planes.map(({ layer, ...plane }) => ({ layer, ...span(plane) })),
@@ -60,6 +60,12 @@ export function pictureOf({ drawing }: { readonly drawing: SectionDrawing }): Pi
     gap: second ? [first![1], second[0]] : undefined,
     traceTopPx: Math.min(...corners.flat().map(([, py]) => py)),
   };
+}
+
+const mostCharacters = 40;
+
+function shortened(name: string): string {
+  return name.length > mostCharacters ? `${name.slice(0, mostCharacters - 1).trimEnd()}\u2026` : name;
 }
 
 /** The mask goes on to both edges of the picture. */

@@ -30,7 +30,7 @@ const titles: Readonly<Record<Sensitivity['of'], string>> = {
           @for (row of rows(); track row.title + row.layer) {
             <tr>
               <th scope="row">
-                {{ row.title }} <span class="faint">{{ row.layer }}</span>
+                {{ row.title }} <span class="faint layer" [title]="row.layer">{{ row.layer }}</span>
               </th>
               <td class="end">{{ row.value }}</td>
               <td class="end">
