@@ -80,7 +80,8 @@ export class Product {
     const ended = over ? undefined : new Promise((resolve) => this.child.once('exit', resolve));
     this.child.kill('SIGTERM');
     await ended;
-    rmSync(this.dataDirectory, { recursive: true, force: true });
+    // The database may still be writing its last words.
+    rmSync(this.dataDirectory, { recursive: true, force: true, maxRetries: 10, retryDelay: 200 });
   }
 }
 

@@ -69,6 +69,8 @@ const gridWays = [
 })
 export class Settings {
   protected readonly store = inject(ChannelStore);
+  /** A template's `?.` gives null where nothing is, which a field would write as 0. */
+  protected readonly temperatureC = computed(() => this.document().stackup?.temperatureC);
   protected readonly fields = { reference, rate, evaluation, start, stop, temperature, reflection };
   protected readonly signalingPicks = signalings.map((value) => ({ value, title: value }));
   protected readonly locked = computed(() => !this.store.mayChange());
